@@ -1,0 +1,2 @@
+//! arraywright
+pub mod units;
