@@ -24,7 +24,11 @@ impl Frequency {
     }
 
     /// The frequency nearest to `mhz` megahertz.
-    #[expect(clippy::cast_possible_truncation, clippy::cast_sign_loss, reason = "frequencies are positive and small")]
+    #[expect(
+        clippy::cast_possible_truncation,
+        clippy::cast_sign_loss,
+        reason = "frequencies are positive and small"
+    )]
     pub fn from_mhz(mhz: f64) -> Self {
         Self { hz: (mhz * 1e6).round() as u64 }
     }
@@ -57,7 +61,9 @@ impl Frequency {
 
     /// Half a free-space wavelength as an exact decimal electrical length.
     pub fn half_wave(self) -> ElectricalLength {
-        ElectricalLength::from_metres(Decimal::from(299_792_458) / Decimal::from(self.hz.max(1)) / Decimal::TWO)
+        ElectricalLength::from_metres(
+            Decimal::from(299_792_458) / Decimal::from(self.hz.max(1)) / Decimal::TWO,
+        )
     }
 
     /// Reads "1.83 MHz" or "1830 kHz".

@@ -104,7 +104,11 @@ impl Length {
 
 /// `value` rounded up to a multiple of `step` by integer division; unchanged when `step` is zero or less.
 pub const fn ceil_to_step(value: i64, step: i64) -> i64 {
-    if step <= 0 { value } else { value.div_euclid(step) * step + if value.rem_euclid(step) > 0 { step } else { 0 } }
+    if step <= 0 {
+        value
+    } else {
+        value.div_euclid(step) * step + if value.rem_euclid(step) > 0 { step } else { 0 }
+    }
 }
 
 impl Add for Length {

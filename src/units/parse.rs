@@ -55,7 +55,9 @@ impl fmt::Display for UnitError {
             Self::UnknownUnit { unit, .. } => write!(out, "the unit `{unit}` is not known here"),
             Self::NotANumber { given, .. } => write!(out, "\"{given}\" cannot be read"),
             Self::NotFinite { given } => write!(out, "\"{given}\" is not a finite number"),
-            Self::TooLarge { given } => write!(out, "\"{given}\" is larger than anything that fits on a site"),
+            Self::TooLarge { given } => {
+                write!(out, "\"{given}\" is larger than anything that fits on a site")
+            }
         }
     }
 }
