@@ -1,0 +1,5 @@
+//! Takeoff and catalogue to a priced bill.
+
+pub mod model;
+
+pub use model::*;

@@ -1,0 +1,123 @@
+//! Coax lines: pieces, plugs, barrels, chokes.
+
+use super::model::{Piece, PieceElectrical, PieceRole, Reason};
+use super::tally::{Tally, Want};
+use super::{ArrayDesign, Scene};
+use crate::design::CablePart;
+use crate::plan::{Connection, Line, LineId, LineLength, LineRole, chokes_on};
+use crate::units::ElectricalLength;
+
+/// Every line of the feed tree is one piece with two plugs.
+pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>, index: usize, array: &ArrayDesign) {
+    for (n, (line, length)) in array.plan.feed.lines.iter().zip(&array.lengths).enumerate() {
+        let cable = array.cables.of(line.role);
+        let mut piece = piece(scene, array, line, length, cable);
+        piece.line = Some((index, LineId(n)));
+        add_plugs(tally, array, line, cable);
+        add_chokes(tally, array, line);
+        if line.connection == Connection::InLine {
+            add_barrel(tally, array, line, cable);
+        }
+        tally.push(piece);
+    }
+}
+
+/// The piece role of a line.
+pub(super) const fn piece_role(role: LineRole) -> PieceRole {
+    match role {
+        LineRole::Branch => PieceRole::Branch,
+        LineRole::Run => PieceRole::Run,
+        LineRole::Delay => PieceRole::Delay,
+        LineRole::Main => PieceRole::Main,
+    }
+}
+
+fn piece(
+    scene: &Scene<'_>,
+    array: &ArrayDesign,
+    line: &Line,
+    length: &LineLength,
+    cable: &CablePart,
+) -> Piece {
+    let layout = &array.plan.layout;
+    let laid = line.role != LineRole::Delay;
+    let grouped = laid && !line.match_group.is_empty();
+    let name = |id| layout.point(id).name.clone();
+    Piece {
+        label: line.label.clone(),
+        role: piece_role(line.role),
+        part: cable.part.clone(),
+        from: name(line.termini.from),
+        to: name(line.termini.to),
+        straight: laid.then_some(length.straight),
+        routed: laid.then_some(length.routed),
+        finished: length.finished,
+        cut: length.cut,
+        coiled: grouped.then_some(length.coiled),
+        match_group: line.match_group.clone(),
+        conductors: None,
+        electrical: Some(electrical(scene, line, length, cable)),
+        serves: line.serves.clone(),
+        line: None,
+        reason: Reason::steps(length.steps.clone()),
+    }
+}
+
+fn electrical(scene: &Scene<'_>, line: &Line, length: &LineLength, cable: &CablePart) -> PieceElectrical {
+    let vf = cable.velocity;
+    let electrical = match line.role {
+        LineRole::Delay => line.delay,
+        LineRole::Branch | LineRole::Run | LineRole::Main => {
+            ElectricalLength::from_metres(length.finished.decimal_metres() / vf.ratio())
+        }
+    };
+    PieceElectrical {
+        length: electrical,
+        velocity_factor: vf,
+        frequency: scene.project.frequency,
+        trim: None,
+        tolerance: None,
+    }
+}
+
+fn connector(cable: &CablePart) -> Want {
+    cable.plug.as_ref().map_or_else(Want::any, |plug| Want::any().with("plug", plug.clone()))
+}
+
+fn add_plugs(tally: &mut Tally<'_>, array: &ArrayDesign, line: &Line, cable: &CablePart) {
+    let layout = &array.plan.layout;
+    for end in [line.termini.from, line.termini.to] {
+        let place = &layout.point(end).name;
+        tally.add("plug", &connector(cable), place, 1, "a plug at each end of a coax piece");
+    }
+}
+
+fn add_barrel(tally: &mut Tally<'_>, array: &ArrayDesign, line: &Line, cable: &CablePart) {
+    let place = &array.plan.layout.point(line.termini.from).name;
+    let leg = array.cables.of(LineRole::Branch);
+    if leg.plug == cable.plug || leg.plug.is_none() || cable.plug.is_none() {
+        tally.add("barrel", &connector(cable), place, 1, "joins a delay line to its leg, in line");
+    } else {
+        let want = connector(cable);
+        tally.add("adaptor", &want, place, 1, "joins a delay line to a leg of another connector family");
+    }
+}
+
+fn add_chokes(tally: &mut Tally<'_>, array: &ArrayDesign, line: &Line) {
+    let layout = &array.plan.layout;
+    let name = |id| &layout.point(id).name;
+    let one = |tally: &mut Tally<'_>, place: &str, why: &str| {
+        tally.add("choke", &Want::any(), place, 1, why);
+    };
+    match chokes_on(line.role) {
+        0 => {}
+        1 if line.role == LineRole::Branch => {
+            one(tally, name(line.termini.from), "common-mode choke of a branch, in the element box");
+        }
+        1 => one(tally, name(line.termini.from), "common-mode choke of a run"),
+        _ => {
+            one(tally, name(line.termini.from), "common-mode choke at the field end of a main line");
+            one(tally, name(line.termini.to), "common-mode choke at the entry panel");
+        }
+    }
+}
