@@ -1,0 +1,5 @@
+//! What a project file may say, and what is said when it says something else.
+
+mod problem;
+mod reading;
+mod support;
