@@ -121,7 +121,7 @@ fn joint(table: &Table<'_>, currency: Option<&Currency>) -> Option<Joint> {
 
 fn joint_roles(list: &Value<'_>) -> Option<Vec<String>> {
     let mut roles: Vec<String> = Vec::new();
-    for item in list.items()? {
+    for item in list.items("\"main\"")? {
         let Some(role) = item.text() else { continue };
         if JOINT_ROLES.contains(&role) {
             if !roles.iter().any(|known| known == role) {

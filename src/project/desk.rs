@@ -76,9 +76,14 @@ impl<'a> Desk<'a> {
         self.assumptions.borrow_mut().push(assumption);
     }
 
+    /// Takes back the assumptions of keys that turned out not to matter.
+    pub(super) fn forget(&self, does_not_matter: impl Fn(&str) -> bool) {
+        self.assumptions.borrow_mut().retain(|assumption| !does_not_matter(&assumption.key));
+    }
+
     /// Replaces a default by a better one that another key decided.
     pub(super) fn assume_instead(&self, key: &str, value: &str, why: &str) {
-        self.assumptions.borrow_mut().retain(|assumption| assumption.key != key);
+        self.forget(|known| known == key);
         self.assume(key.to_owned(), value, why);
     }
 
@@ -90,6 +95,11 @@ impl<'a> Desk<'a> {
     /// Whether an error stands on the desk.
     pub(super) fn has_errors(&self) -> bool {
         self.problems.borrow().has_errors()
+    }
+
+    /// Whether the text mentions `word`, in a table or in a broken line.
+    pub(super) fn mentions(&self, word: &str) -> bool {
+        self.text.contains(word)
     }
 
     /// What was found.

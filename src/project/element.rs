@@ -35,11 +35,17 @@ const HIGHEST: Length = Length::from_mm(60_000);
 /// Reads the element of an array.
 pub(super) fn read(array: &Table<'_>, bands: Option<Bands>) -> Element {
     let place = array.take("element").map(|value| value.place());
+    let example = "{ wire = { length = \"176 m\" } }";
+    if let Some(value) = array.take("element")
+        && !matches!(value.raw, DeValue::Table(_))
+    {
+        value.table_like(example);
+        return Element { kind: None, spec: None, place, height: None };
+    }
     let table = array.section("element");
     let found: Vec<Value<'_>> =
         ["wire", "two-way-wire", "vertical"].iter().filter_map(|key| table.take(key)).collect();
-    let nothing_else = array.take("element").is_none_or(|value| matches!(value.raw, DeValue::Table(_)));
-    if found.is_empty() && nothing_else {
+    if found.is_empty() {
         let example = "element.wire = { length = \"176 m\" } or element.vertical = { height = \"6 m\" }";
         array.desk.error(code::NO_ELEMENT, array.at(), "this array has no element", format!("add {example}"));
     }

@@ -2,6 +2,7 @@
 
 mod allowance;
 mod array;
+mod assumption;
 pub mod code;
 mod currency;
 mod desk;

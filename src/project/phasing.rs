@@ -175,7 +175,8 @@ pub(super) fn check_count(list: &Value<'_>, weights: usize, elements: usize) {
 
 /// Reads `weights = [{ amplitude, phase }, …]`; `None`: already reported.
 pub(super) fn weights(list: &Value<'_>) -> Option<Vec<Weight>> {
-    let weights: Vec<Option<Weight>> = list.items()?.iter().map(weight).collect();
+    let weights: Vec<Option<Weight>> =
+        list.items("{ amplitude = 1.0, phase = \"0 deg\" }, …")?.iter().map(weight).collect();
     weights.into_iter().collect()
 }
 

@@ -126,7 +126,7 @@ fn charge_of(value: &Value<'_>, currency: Option<&Currency>) -> Option<Freight> 
 
 fn exchange(list: &Value<'_>, currency: Option<&Currency>) -> Vec<Exchange> {
     let mut rates: Vec<Exchange> = Vec::new();
-    for item in list.items().unwrap_or_default() {
+    for item in list.items("{ from = \"USD\", rate = \"0.92\", on = 2026-09-30 }").unwrap_or_default() {
         let Some(table) = item.table() else { continue };
         let from = table.need("from", "from = \"USD\"", currency::read);
         let rate = table.need("rate", "rate = \"0.92\"", exchange_rate);

@@ -6,7 +6,7 @@ use super::code;
 use super::desk::Desk;
 use super::model::Project;
 use super::table::Table;
-use super::{allowance, array, labour, on_hand, prices, site};
+use super::{allowance, array, assumption, labour, on_hand, prices, site};
 use crate::problem::Problems;
 
 /// Reads a project file, and the table of stock on hand if there is one beside it (its name and text).
@@ -29,11 +29,12 @@ fn sections(file: &Table<'_>, on_hand_csv: Option<(&str, &str)>) -> Option<Proje
     let site = site::site(&file.section("site"));
     let arrays = file.list("array");
     array::check_names(&arrays);
-    if arrays.is_empty() && !file.has("array") {
+    if arrays.is_empty() && !file.has("array") && !file.desk.mentions("[[array") {
         let help = "add an [[array]] with name, heading and element";
         file.desk.error(code::NO_ARRAY, None, "the project has no array", help);
     }
-    let arrays: Vec<_> = arrays.into_iter().map(|table| array::read(table, bands)).collect();
+    let arrays: Option<Vec<_>> =
+        arrays.into_iter().map(|table| array::read(table, bands)).collect::<Vec<_>>().into_iter().collect();
     let practice = allowance::read(&file.section("practice"), currency);
     let prices = prices::read(&file.section("prices"), currency);
     let labour = labour::read(&file.section("labour"), currency);
@@ -48,6 +49,8 @@ fn sections(file: &Table<'_>, on_hand_csv: Option<(&str, &str)>) -> Option<Proje
     let existing = file.list("existing").iter().filter_map(site::existing).collect();
     selectors(file);
     file.finish_with(&MISPLACED);
+    let arrays = arrays?;
+    file.desk.forget(|key| assumption::does_not_matter(key, &arrays));
     Some(Project {
         title: header.title,
         currency: header.currency?,
@@ -56,7 +59,7 @@ fn sections(file: &Table<'_>, on_hand_csv: Option<(&str, &str)>) -> Option<Proje
         also: header.also,
         receiver_noise: header.receiver_noise,
         site: site?,
-        arrays: arrays.into_iter().collect::<Option<_>>()?,
+        arrays,
         keep_out,
         crossings,
         existing,

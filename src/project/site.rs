@@ -75,7 +75,7 @@ fn frequency(value: &Value<'_>) -> Option<Frequency> {
 
 fn also(list: &Value<'_>, design: Option<Frequency>) -> Vec<Frequency> {
     let mut bands: Vec<Frequency> = Vec::new();
-    for item in list.items().unwrap_or_default() {
+    for item in list.items("\"3.55 MHz\"").unwrap_or_default() {
         let Some(band) = frequency(&item) else { continue };
         if design == Some(band) || bands.contains(&band) {
             item.desk.warning(
@@ -190,7 +190,7 @@ fn ground(value: &Value<'_>) -> Option<Ground> {
 
 /// `{ east, north }`.
 pub(super) fn site_point(value: &Value<'_>) -> Option<SitePoint> {
-    let table = value.table()?;
+    let table = value.table_like("{ east = \"0 m\", north = \"0 m\" }")?;
     let east = table.need("east", "east = \"0 m\"", Value::length);
     let north = table.need("north", "north = \"0 m\"", Value::length);
     table.finish();
@@ -201,7 +201,8 @@ pub(super) fn site_point(value: &Value<'_>) -> Option<SitePoint> {
 pub(super) fn keep_out(table: &Table<'_>) -> Option<KeepOut> {
     let name = table.need("name", "name = \"pond\"", Value::name_text);
     let polygon = table.need("polygon", "polygon = [{ east = \"0 m\", north = \"0 m\" }, …]", |value| {
-        let corners: Vec<Option<SitePoint>> = value.items()?.iter().map(site_point).collect();
+        let corners: Vec<Option<SitePoint>> =
+            value.items("{ east = \"0 m\", north = \"0 m\" }, …")?.iter().map(site_point).collect();
         polygon::check(value, corners.into_iter().collect::<Option<Vec<_>>>()?)
     });
     table.finish();

@@ -148,7 +148,8 @@ fn ring(value: &Value<'_>, table: &Table<'_>) -> Option<EndfireStage> {
 fn custom(table: &Table<'_>) -> Option<CustomSpec> {
     let positions =
         table.need("positions", "positions = [{ forward = \"0 m\", right = \"0 m\" }, …]", |list| {
-            let positions: Vec<Option<ArrayPoint>> = list.items()?.iter().map(array_point).collect();
+            let positions: Vec<Option<ArrayPoint>> =
+                list.items("{ forward = \"0 m\", right = \"0 m\" }, …")?.iter().map(array_point).collect();
             let positions: Vec<ArrayPoint> = positions.into_iter().collect::<Option<_>>()?;
             check_positions(list, &positions);
             Some(positions)
@@ -180,7 +181,7 @@ fn check_positions(list: &Value<'_>, positions: &[ArrayPoint]) {
 
 /// `{ forward, right }`.
 pub(super) fn array_point(value: &Value<'_>) -> Option<ArrayPoint> {
-    let table = value.table()?;
+    let table = value.table_like("{ forward = \"0 m\", right = \"0 m\" }")?;
     let forward = table.need("forward", "forward = \"0 m\"", Value::length);
     let right = table.need("right", "right = \"0 m\"", Value::length);
     table.finish();

@@ -159,7 +159,7 @@ impl<'a> Table<'a> {
             self.desk.error(code::SINGLE_BRACKETS, Some(value.key_at), message, format!("write [[{key}]]"));
             return vec![Self::new(self.desk, value.path, value.key_at, entries)];
         }
-        let items = value.items().unwrap_or_default();
+        let items = value.items("{ … }").unwrap_or_default();
         items.iter().filter_map(Value::table).collect()
     }
 

@@ -307,14 +307,24 @@ impl<'a> Value<'a> {
         }
     }
 
+    /// The same, where `example` shows what would do.
+    pub(super) fn table_like(&self, example: &str) -> Option<Table<'a>> {
+        match self.raw {
+            DeValue::Table(_) => self.table(),
+            _ => self.wrong_type("a table of keys", example),
+        }
+    }
+
     /// Where a table is said to begin: its key, or itself in a list.
     fn start(&self) -> usize {
         if self.key.is_some() { self.key_at } else { self.at }
     }
 
-    /// The items of the list that stands here.
-    pub(super) fn items(&self) -> Option<Vec<Self>> {
-        let DeValue::Array(items) = self.raw else { return self.wrong_type("a list", "[ … ]") };
+    /// The items of the list that stands here; `example` shows one.
+    pub(super) fn items(&self, example: &str) -> Option<Vec<Self>> {
+        let DeValue::Array(items) = self.raw else {
+            return self.wrong_type("a list", &format!("[{example}]"));
+        };
         let item = |item: &'a toml::Spanned<DeValue<'a>>| Self {
             desk: self.desk,
             path: self.path.clone(),
