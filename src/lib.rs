@@ -1,11 +1,25 @@
-//! arraywright
-pub mod arrays;
-pub mod catalogue;
-pub mod cutting;
-pub mod design;
-pub mod plan;
-pub mod pricing;
-pub mod problem;
-pub mod project;
-pub mod takeoff;
+//! From the sketch of a low-band receive antenna array to its parts, prices, cut list and work order.
+//!
+//! ```text
+//! project text ─project─▶ Project ─arrays─▶ Layout + FeedTree ─design─▶ Design (choices made, lines measured)
+//!                                                                          │
+//!    CSV files ─catalogue─▶ Catalogue ──────────────┐                      ▼
+//!                                                   ├──────────▶ takeoff ─▶ cutting ─▶ pricing ─▶ report
+//!                                                   │            (every item and piece with its reason)
+//! ```
+//!
+//! Data flows one way: a module uses only modules above it in this list, and each stage is a pure function of its
+//! inputs. Only `cli` knows files, the terminal and the command line.
+
 pub mod units;
+pub mod problem;
+pub mod catalogue;
+pub mod project;
+pub mod plan;
+pub mod arrays;
+pub mod design;
+pub mod takeoff;
+pub mod cutting;
+pub mod pricing;
+pub mod report;
+// cli
