@@ -92,7 +92,7 @@ fn check(array: &Table<'_>, table: &Table<'_>, feed: &FeedSpec) {
     let mut wrong: Vec<(&'static str, Clash)> = Vec::new();
     if !rows && !cells {
         wrong.extend([("hub", NO_HUB), ("join", NOTHING_TO_JOIN)]);
-    } else if home && rows != cells {
+    } else if home && (rows != cells || by_row) {
         wrong.push(("hub", ONLY_HUB_AT_RECEIVER));
     }
     if by_row {
@@ -104,9 +104,6 @@ fn check(array: &Table<'_>, table: &Table<'_>, feed: &FeedSpec) {
     }
     if by_row && !(rows && cells) {
         wrong.push(("combining", NO_ROWS));
-    }
-    if by_row && home {
-        wrong.push(("join", HUB_IN_FIELD));
     }
     if merged && by_row {
         wrong.push(("delay-style", ONE_DELAY));
@@ -163,11 +160,6 @@ const NO_ROWS: Clash = Clash {
     code: code::BY_ROW_WITHOUT_ROWS,
     message: "combining by row needs an end-fire stage and a broadside stage",
     help: "leave `combining` out, or give the array both stages",
-};
-const HUB_IN_FIELD: Clash = Clash {
-    code: code::BY_ROW_AT_RECEIVER,
-    message: "combining = \"by-row\" has one hub in the field, so no group's line comes home",
-    help: "choose one: join = \"hub\" or combining = \"by-cell\"",
 };
 const ONE_DELAY: Clash = Clash {
     code: code::MERGED_BY_ROW,
