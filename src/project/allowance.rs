@@ -25,8 +25,8 @@ pub(super) fn read(table: &Table<'_>, currency: Option<&Currency>) -> Practice {
             v.positive("V", Voltage::new(0.0), Voltage::parse)
         }),
         hub_arresters: hub_arresters(table),
-        joint: table.take("joint").and_then(|v| joint(&v.table()?, currency)).unwrap_or_default(),
-        waste: by_role(table, "waste", |v| v.percent()),
+        joint: table.get("joint", |v| Some(joint(&v.table()?, currency))).unwrap_or_default(),
+        waste: by_role(table, "waste", Value::percent),
         spares: by_role(table, "spares", |v| v.count(0..=10_000)),
         ..earth(table, supports(table, lengths(table)))
     };
@@ -106,7 +106,7 @@ fn hub_arresters(table: &Table<'_>) -> HubArresters {
     if bought { HubArresters::Bought } else { HubArresters::Advised }
 }
 
-fn joint(table: &Table<'_>, currency: Option<&Currency>) -> Option<Joint> {
+fn joint(table: &Table<'_>, currency: Option<&Currency>) -> Joint {
     let length = |key| table.or(key, Length::ZERO, "none given", Value::allowance);
     let joint = Joint {
         price: table.or("price", Money::ZERO, "none given", |v| v.money(currency)),
@@ -116,7 +116,7 @@ fn joint(table: &Table<'_>, currency: Option<&Currency>) -> Option<Joint> {
         allowed: table.need("allowed", "allowed = [\"main\"]", joint_roles).unwrap_or_default(),
     };
     table.finish();
-    Some(joint)
+    joint
 }
 
 fn joint_roles(list: &Value<'_>) -> Option<Vec<String>> {
@@ -136,10 +136,10 @@ fn joint_roles(list: &Value<'_>) -> Option<Vec<String>> {
     Some(roles)
 }
 
-fn by_role<T>(
-    table: &Table<'_>,
+fn by_role<'a, T>(
+    table: &Table<'a>,
     key: &'static str,
-    read: impl Fn(&Value<'_>) -> Option<T>,
+    read: impl Fn(&Value<'a>) -> Option<T>,
 ) -> BTreeMap<String, T> {
     let Some(value) = table.take(key) else {
         table.desk.assume(table.path_of(key), "by role, as usual", COMMON);

@@ -19,14 +19,8 @@ pub(super) fn read(table: Table<'_>, bands: Option<Bands>) -> Option<ArraySpec> 
     };
     let option = table.get("option", Value::name_text);
     let heading = table.need("heading", "heading = \"310 deg\"", heading);
-    let centre = match table.take("centre") {
-        Some(value) => site_point(&value),
-        None => {
-            let datum = SitePoint { east: Length::ZERO, north: Length::ZERO };
-            table.desk.assume(table.path_of("centre"), "east 0 m, north 0 m", "no place given");
-            Some(datum)
-        }
-    };
+    let datum = SitePoint { east: Length::ZERO, north: Length::ZERO };
+    let centre = table.or_said("centre", datum, "east 0 m, north 0 m", "no place given", site_point);
     let element = element::read(&table, bands);
     let endfire = stage::endfire(&table, &element, bands);
     let broadside = stage::broadside(&table, bands);
@@ -44,7 +38,7 @@ pub(super) fn read(table: Table<'_>, bands: Option<Bands>) -> Option<ArraySpec> 
         name: name?,
         option,
         heading: heading?,
-        centre: centre?,
+        centre,
         element: element.spec?,
         endfire,
         broadside,

@@ -123,8 +123,6 @@ crate::problem_codes! {
     HUB_AT_RECEIVER = "hub-at-receiver";
     /// `by-row` without rows and cells.
     BY_ROW_WITHOUT_ROWS = "by-row-without-rows";
-    /// One hub for all cells, and their lines home at once.
-    BY_ROW_AT_RECEIVER = "by-row-at-receiver";
     /// `join` without anything to join.
     JOIN_WITHOUT_STAGE = "join-without-stage";
     /// Merged delays although one delay serves all cells.

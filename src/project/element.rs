@@ -144,14 +144,13 @@ fn termination(value: &Value<'_>) -> Option<Termination> {
         table.finish();
         return reflection.map(Termination::Reflection);
     }
-    let word = match value.raw {
-        DeValue::String(text) => text.trim(),
-        _ => "1",
-    };
-    if word == "matched" {
+    let word = value.raw.as_str().map(str::trim);
+    if word == Some("matched") {
         return Some(Termination::Matched);
     }
-    if word.starts_with(|c: char| c.is_alphabetic()) || word.is_empty() {
+    if let Some(word) = word
+        && (word.is_empty() || word.starts_with(char::is_alphabetic))
+    {
         let message = format!("`termination` cannot be \"{}\"", word.escape_debug());
         let help = "accepted: a resistor such as \"450 ohm\", \"matched\", or { reflection = 0.3 }";
         return value.refuse(code::BAD_TERMINATION, message, help);

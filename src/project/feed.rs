@@ -2,8 +2,6 @@
 
 use std::collections::BTreeMap;
 
-use toml::de::DeValue;
-
 use super::code;
 use super::model::{AmplifierChoice, Combining, DelayStyle, FeedSpec, HubPlace, Join, Power};
 use super::stage;
@@ -79,19 +77,10 @@ fn spec(table: &Table<'_>) -> FeedSpec {
 
 fn hub(table: &Table<'_>, key: &'static str) -> HubPlace {
     const WORDS: &[(&str, HubPlace)] = &[("centre", HubPlace::Centre), ("best", HubPlace::Best)];
-    let Some(value) = table.take(key) else {
-        table.desk.assume(
-            table.path_of(key),
-            "centre",
-            "no place given; the centre of the group's feed points",
-        );
-        return HubPlace::Centre;
-    };
-    let place = match value.raw {
-        DeValue::Table(_) => stage::array_point(&value).map(HubPlace::At),
-        _ => value.choice(WORDS),
-    };
-    place.unwrap_or(HubPlace::Centre)
+    let why = "no place given; the centre of the group's feed points";
+    table.or_said(key, HubPlace::Centre, "centre", why, |value| {
+        if value.raw.is_table() { stage::array_point(value).map(HubPlace::At) } else { value.choice(WORDS) }
+    })
 }
 
 /// What in a feed excludes what.
@@ -99,82 +88,89 @@ fn check(array: &Table<'_>, table: &Table<'_>, feed: &FeedSpec) {
     let (rows, cells) = (stage::has_endfire(array), array.has("broadside"));
     let by_row = feed.combining == Combining::ByRow;
     let home = feed.join == Join::Receiver;
-    let complain = |key: &'static str, wrong: bool, code: Code, message: &str, help: &str| {
-        if let (true, Some(value)) = (wrong, table.take(key)) {
-            value.desk.error(code, Some(value.key_at), message, help);
+    let merged = feed.delay_style == DelayStyle::Merged;
+    let mut wrong: Vec<(&'static str, Clash)> = Vec::new();
+    if !rows && !cells {
+        wrong.extend([("hub", NO_HUB), ("join", NOTHING_TO_JOIN)]);
+    } else if home && (rows != cells || by_row) {
+        wrong.push(("hub", ONLY_HUB_AT_RECEIVER));
+    }
+    if by_row {
+        wrong.push(("array-hub", ONE_HUB));
+    } else if !(rows && cells) {
+        wrong.push(("array-hub", NO_CELLS));
+    } else if home {
+        wrong.push(("array-hub", ARRAY_HUB_AT_RECEIVER));
+    }
+    if by_row && !(rows && cells) {
+        wrong.push(("combining", NO_ROWS));
+    }
+    if merged && by_row {
+        wrong.push(("delay-style", ONE_DELAY));
+    }
+    if merged && two_parts(feed) {
+        wrong.push(("delay", TWO_PARTS));
+    }
+    for (key, clash) in wrong {
+        let stands = key != "join" || home;
+        if let (Some(value), true) = (table.take(key), stands) {
+            table.desk.error(clash.code, Some(value.key_at), clash.message, clash.help);
         }
-    };
-    complain(
-        "hub",
-        !rows && !cells,
-        code::HUB_WITHOUT_STAGE,
-        "one element alone has no hub: its line goes to the receiver",
-        "leave `hub` out, or add a stage",
-    );
-    complain(
-        "array-hub",
-        by_row,
-        code::ARRAY_HUB_BY_ROW,
-        "combining = \"by-row\" has one hub only",
-        "move it with `hub`, and leave `array-hub` out",
-    );
-    complain(
-        "array-hub",
-        !by_row && !(rows && cells),
-        code::ARRAY_HUB_WITHOUT_CELLS,
-        "an array hub joins cells, but this array is not a broadside of end-fire cells",
-        "use `hub`, or give the array both stages",
-    );
-    complain(
-        "array-hub",
-        home && rows && cells && !by_row,
-        code::HUB_AT_RECEIVER,
-        "join = \"receiver\" puts the array hub at the receiver",
-        "leave `array-hub` out",
-    );
-    complain(
-        "hub",
-        home && (rows != cells),
-        code::HUB_AT_RECEIVER,
-        "join = \"receiver\" puts the only hub of this array at the receiver",
-        "leave `hub` out",
-    );
-    complain(
-        "join",
-        home && !rows && !cells,
-        code::JOIN_WITHOUT_STAGE,
-        "one element alone has nothing to join at the receiver",
-        "leave `join` out, or add a stage",
-    );
-    complain(
-        "join",
-        home && by_row,
-        code::BY_ROW_AT_RECEIVER,
-        "combining = \"by-row\" has one hub in the field, so no group's line comes home",
-        "choose one: join = \"hub\" or combining = \"by-cell\"",
-    );
-    complain(
-        "combining",
-        by_row && !(rows && cells),
-        code::BY_ROW_WITHOUT_ROWS,
-        "combining by row needs an end-fire stage and a broadside stage",
-        "leave `combining` out, or give the array both stages",
-    );
-    complain(
-        "delay-style",
-        feed.delay_style == DelayStyle::Merged && by_row,
-        code::MERGED_BY_ROW,
-        "by row one delay serves all cells, so it cannot be part of a leg",
-        "choose delay-style = \"separate\" or combining = \"by-cell\"",
-    );
-    complain(
-        "delay",
-        feed.delay_style == DelayStyle::Merged && two_parts(feed),
-        code::MERGED_TWO_PARTS,
-        "a merged delay is one piece with its branch, so both are of one part",
-        "name the same part in `branch` and `delay`, or choose delay-style = \"separate\"",
-    );
+    }
 }
+
+/// Two ways of feeding that exclude each other.
+struct Clash {
+    code: Code,
+    message: &'static str,
+    help: &'static str,
+}
+
+const NO_HUB: Clash = Clash {
+    code: code::HUB_WITHOUT_STAGE,
+    message: "one element alone has no hub: its line goes to the receiver",
+    help: "leave `hub` out, or add a stage",
+};
+const NOTHING_TO_JOIN: Clash = Clash {
+    code: code::JOIN_WITHOUT_STAGE,
+    message: "one element alone has nothing to join at the receiver",
+    help: "leave `join` out, or add a stage",
+};
+const ONLY_HUB_AT_RECEIVER: Clash = Clash {
+    code: code::HUB_AT_RECEIVER,
+    message: "join = \"receiver\" puts the only hub of this array at the receiver",
+    help: "leave `hub` out",
+};
+const ONE_HUB: Clash = Clash {
+    code: code::ARRAY_HUB_BY_ROW,
+    message: "combining = \"by-row\" has one hub only",
+    help: "move it with `hub`, and leave `array-hub` out",
+};
+const NO_CELLS: Clash = Clash {
+    code: code::ARRAY_HUB_WITHOUT_CELLS,
+    message: "an array hub joins cells, but this array is not a broadside of end-fire cells",
+    help: "use `hub`, or give the array both stages",
+};
+const ARRAY_HUB_AT_RECEIVER: Clash = Clash {
+    code: code::HUB_AT_RECEIVER,
+    message: "join = \"receiver\" puts the array hub at the receiver",
+    help: "leave `array-hub` out",
+};
+const NO_ROWS: Clash = Clash {
+    code: code::BY_ROW_WITHOUT_ROWS,
+    message: "combining by row needs an end-fire stage and a broadside stage",
+    help: "leave `combining` out, or give the array both stages",
+};
+const ONE_DELAY: Clash = Clash {
+    code: code::MERGED_BY_ROW,
+    message: "by row one delay serves all cells, so it cannot be part of a leg",
+    help: "choose delay-style = \"separate\" or combining = \"by-cell\"",
+};
+const TWO_PARTS: Clash = Clash {
+    code: code::MERGED_TWO_PARTS,
+    message: "a merged delay is one piece with its branch, so both are of one part",
+    help: "name the same part in `branch` and `delay`, or choose delay-style = \"separate\"",
+};
 
 fn two_parts(feed: &FeedSpec) -> bool {
     matches!((&feed.branch, &feed.delay), (Some(branch), Some(delay)) if branch != delay)

@@ -36,10 +36,12 @@ pub(super) fn read(table: &Table<'_>, currency: Option<&Currency>) -> LabourTerm
 
 /// Money an hour; a bare 0 stands for volunteers.
 fn rate(value: &Value<'_>, currency: Option<&Currency>) -> Option<Money> {
-    match value.raw {
-        DeValue::Integer(number) if number.as_str() == "0" => Some(Money::ZERO),
-        _ => value.money(currency),
+    if let DeValue::Integer(number) = value.raw
+        && number.as_str() == "0"
+    {
+        return Some(Money::ZERO);
     }
+    value.money(currency)
 }
 
 fn travel(table: &Table<'_>, currency: Option<&Currency>) -> Option<Travel> {

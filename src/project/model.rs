@@ -559,17 +559,6 @@ pub struct Prices {
     pub oldest_price_days: i64,
 }
 
-impl Prices {
-    /// The class under which one rate for everything is kept.
-    pub const EVERYTHING: &'static str = "*";
-
-    /// The tax rate of a class: its own, else the rate for everything, else none.
-    pub fn tax_of(&self, class: &str) -> Percent {
-        let own = self.tax.get(class).or_else(|| self.tax.get(Self::EVERYTHING));
-        own.copied().unwrap_or_default()
-    }
-}
-
 /// One freight charge.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Freight {

@@ -46,13 +46,7 @@ pub(super) fn read(table: &Table<'_>, rows: &Rows<'_>, bands: Option<Bands>) -> 
         Scheme::InPhase => (Decimal::ONE, "in-phase: the delay is the step"),
         Scheme::HalfWave => (Decimal::new(94, 2), "half-wave: half a wave less 0.94 of the step"),
     };
-    let delay = match table.take("delay") {
-        Some(value) => delay(&value).unwrap_or(DelayRatio::Ratio(ratio)),
-        None => {
-            table.desk.assume(table.path_of("delay"), ratio.to_string(), why);
-            DelayRatio::Ratio(ratio)
-        }
-    };
+    let delay = table.or_said("delay", DelayRatio::Ratio(ratio), &ratio.to_string(), why, delay);
     check_ratio(table, rows, scheme, delay);
     if let (Some(step), Some(bands), Some(at)) = (rows.step, bands, table.take(rows.step_key)) {
         check_step(&at, step, scheme, delay, bands);

@@ -14,20 +14,11 @@ use crate::units::{Currency, Money, Percent, UnitError, parse_decimal};
 
 /// Reads `[prices]`.
 pub(super) fn read(table: &Table<'_>, currency: Option<&Currency>) -> Prices {
-    let tax = match table.take("tax") {
-        Some(value) => tax(&value),
-        None => {
-            table.desk.assume(table.path_of("tax"), "none", "no rate given; prices are taken as final");
-            BTreeMap::new()
-        }
-    };
-    let (freight, freight_free_over) = match table.take("freight") {
-        Some(value) => freight(&value, currency),
-        None => {
-            table.desk.assume(table.path_of("freight"), "none", "no charges given");
-            (BTreeMap::new(), None)
-        }
-    };
+    let no_tax = "no rate given; prices are taken as final";
+    let no_freight = "no charges given";
+    let tax = table.or_said("tax", BTreeMap::new(), "none", no_tax, |v| Some(tax(v)));
+    let (freight, freight_free_over) =
+        table.or_said("freight", Default::default(), "none", no_freight, |v| Some(freight(v, currency)));
     let ten_percent = Percent::from_ratio(Decimal::new(10, 2));
     let prices = Prices {
         tax,
@@ -47,16 +38,10 @@ pub(super) fn read(table: &Table<'_>, currency: Option<&Currency>) -> Prices {
 }
 
 fn oldest_price(table: &Table<'_>) -> i64 {
-    match table.take("oldest-price") {
-        Some(value) => value
-            .quantity("days", parse_days)
-            .and_then(|days| if days > 0 { Some(days) } else { value.not_positive() }),
-        None => {
-            table.desk.assume(table.path_of("oldest-price"), "730 days", "older prices are errors");
-            None
-        }
-    }
-    .unwrap_or(730)
+    table.or_said("oldest-price", 730, "730 days", "older prices are errors", |value| {
+        let days = value.quantity("days", parse_days)?;
+        if days > 0 { Some(days) } else { value.not_positive() }
+    })
 }
 
 fn parse_days(text: &str) -> Result<i64, UnitError> {
@@ -85,12 +70,10 @@ fn parse_days(text: &str) -> Result<i64, UnitError> {
     }
 }
 
-/// One rate for everything, or rates by class.
+/// One rate for everything, kept as that of goods (the class of all that has no rate of its own), or rates by class.
 fn tax(value: &Value<'_>) -> BTreeMap<String, Percent> {
     if !matches!(value.raw, DeValue::Table(_)) {
-        let classes = ["goods", Prices::EVERYTHING];
-        let rate = value.percent();
-        return classes.iter().filter_map(|class| Some(((*class).to_owned(), rate?))).collect();
+        return value.percent().map(|rate| ("goods".to_owned(), rate)).into_iter().collect();
     }
     let Some(table) = value.table() else { return BTreeMap::new() };
     table.entries().iter().filter_map(|rate| Some((rate.name().to_owned(), rate.percent()?))).collect()
@@ -150,11 +133,10 @@ fn exchange(list: &Value<'_>, currency: Option<&Currency>) -> Vec<Exchange> {
 
 /// A rate in quotes, as money is, or bare.
 fn exchange_rate(value: &Value<'_>) -> Option<Decimal> {
-    let rate = match value.raw {
-        DeValue::String(text) => {
-            value.quantity("", |_| parse_decimal(text.trim(), "a rate such as \"0.92\""))?
-        }
-        _ => value.ratio()?,
+    let rate = if value.raw.is_str() {
+        value.quantity("", |text| parse_decimal(text.trim(), "a rate such as \"0.92\""))?
+    } else {
+        value.ratio()?
     };
     if rate > Decimal::ZERO { Some(rate) } else { value.not_positive() }
 }

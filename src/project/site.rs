@@ -54,13 +54,8 @@ pub(super) fn header(table: &Table<'_>) -> Header {
 }
 
 fn project_currency(table: &Table<'_>) -> Option<Currency> {
-    match table.take("currency") {
-        Some(value) => currency::read(&value),
-        None => {
-            table.desk.assume(table.path_of("currency"), "EUR", "no currency given");
-            Currency::new("EUR")
-        }
-    }
+    let euro = Currency::new("EUR");
+    table.or_said("currency", euro, "EUR", "no currency given", |v| Some(currency::read(v)))
 }
 
 fn frequency(value: &Value<'_>) -> Option<Frequency> {
@@ -94,14 +89,8 @@ fn also(list: &Value<'_>, design: Option<Frequency>) -> Vec<Frequency> {
 /// Reads `[site]`; `None`: already reported.
 pub(super) fn site(table: &Table<'_>) -> Option<Site> {
     let coordinates = coordinates(table);
-    let ground = match table.take("ground") {
-        Some(value) => ground(&value).unwrap_or(Ground::Average),
-        None => {
-            let why = "no ground given; 5 mS/m and permittivity 13";
-            table.desk.assume(table.path_of("ground"), "average", why);
-            Ground::Average
-        }
-    };
+    let why = "no ground given; 5 mS/m and permittivity 13";
+    let ground = table.or_said("ground", Ground::Average, "average", why, ground);
     let soil = table.or_later("soil", "average soil", "no soil resistivity given", |v| {
         v.positive("ohm m", Resistivity::new(0.0), Resistivity::parse)
     });

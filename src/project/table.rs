@@ -93,18 +93,16 @@ impl<'a> Table<'a> {
         example: &str,
         read: impl FnOnce(&Value<'a>) -> Option<T>,
     ) -> Option<T> {
-        match self.take(key) {
-            Some(value) => read(&value),
-            None => {
-                self.missing(key, example);
-                None
-            }
+        if let Some(value) = self.take(key) {
+            return read(&value);
         }
+        self.missing(key, example);
+        None
     }
 
     /// Writes down that `key` is absent.
     pub(super) fn missing(&self, key: &str, example: &str) {
-        let table = self.entries.is_none().then(|| format!("[{}] ", self.path)).unwrap_or_default();
+        let table = if self.entries.is_none() { format!("[{}] ", self.path) } else { String::new() };
         let message = format!("{table}`{key}` is missing");
         self.desk.missing(key, self.at, message, format!("add a line such as: {example}"));
     }
@@ -117,10 +115,23 @@ impl<'a> Table<'a> {
         why: &str,
         read: impl FnOnce(&Value<'a>) -> Option<T>,
     ) -> T {
+        let said = default.to_string();
+        self.or_said(key, default, &said, why, read)
+    }
+
+    /// The same, with the default put in the words of `said`.
+    pub(super) fn or_said<T>(
+        &self,
+        key: &'static str,
+        default: T,
+        said: &str,
+        why: &str,
+        read: impl FnOnce(&Value<'a>) -> Option<T>,
+    ) -> T {
         if let Some(value) = self.take(key) {
             return read(&value).unwrap_or(default);
         }
-        self.desk.assume(self.path_of(key), default.to_string(), why);
+        self.desk.assume(self.path_of(key), said, why);
         default
     }
 

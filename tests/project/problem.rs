@@ -14,8 +14,8 @@ const FOLDER: &str = "problems/project";
 
 /// The names in the fixture folder that end in `ending`, without it.
 fn fixtures(ending: &str) -> BTreeSet<String> {
-    let entries = fs::read_dir(tests_folder(FOLDER)).unwrap();
-    let names = entries.map(|entry| entry.unwrap().file_name().into_string().unwrap());
+    let entries = fs::read_dir(tests_folder(FOLDER)).expect("the fixture folder");
+    let names = entries.filter_map(|entry| entry.ok()?.file_name().into_string().ok());
     names.filter_map(|name| name.strip_suffix(ending).map(str::to_owned)).collect()
 }
 

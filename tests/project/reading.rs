@@ -129,6 +129,7 @@ fn ratios_are_the_decimals_that_were_written() {
     assert_eq!(read("1.05"), Some(Decimal::new(105, 2)));
     assert_eq!(read("1.0500000000000000444"), Some("1.0500000000000000444".parse().unwrap()));
     assert_eq!(read("2"), Some(Decimal::TWO));
+    assert_eq!(project(&one_wire("[practice]\nspares = { plug = 1_000 }")).practice.spares["plug"], 1_000);
     let product = Decimal::from(150) * read("1.05").unwrap();
     assert_eq!(product, Decimal::new(1575, 1), "150 m × 1.05 is 157.5 m exactly");
 }
@@ -138,10 +139,10 @@ fn defaults_of_a_stage_follow_its_scheme_and_its_wires() {
     let phasing = |more: &str| {
         let project = project(&one_wire(&format!("echelon = {{ stagger = \"60 ft\"{more} }}")));
         let echelon = echelon(&project);
-        match echelon.phasing {
-            Phasing::Scheme { scheme, delay: DelayRatio::Ratio(ratio) } => (scheme, ratio, echelon.offset),
-            _ => panic!("{:?}", echelon.phasing),
-        }
+        let Phasing::Scheme { scheme, delay: DelayRatio::Ratio(ratio) } = echelon.phasing else {
+            panic!("{:?}", echelon.phasing)
+        };
+        (scheme, ratio, echelon.offset)
     };
     let offset = Length::from_mm(5_000);
     assert_eq!(phasing(""), (Scheme::Crossfire, Decimal::new(94, 2), offset));
@@ -188,8 +189,8 @@ travel = { people = 3, trips = 2, hours = 1.5, money = "12.00" }
     );
     let project = project(&text);
     let prices = &project.prices;
-    assert_eq!(prices.tax_of("goods"), Percent::from_ratio(Decimal::new(21, 2)));
-    assert_eq!(prices.tax_of("hire"), Percent::default());
+    assert_eq!(prices.tax["goods"], Percent::from_ratio(Decimal::new(21, 2)));
+    assert_eq!(prices.tax["labour"], Percent::default());
     assert_eq!(prices.freight["heavy"], Freight::PerKilogram(Money::new(Decimal::new(40, 2))));
     assert_eq!(prices.freight.len(), 2, "free-over is no supplier");
     assert_eq!(prices.freight_free_over, Some(Money::new(Decimal::from(500))));
@@ -200,11 +201,11 @@ travel = { people = 3, trips = 2, hours = 1.5, money = "12.00" }
 }
 
 #[test]
-fn one_tax_rate_is_for_everything() {
+fn one_tax_rate_is_that_of_goods_which_all_others_follow() {
     let project = project(&one_wire("[prices]\ntax = \"21 %\""));
-    for class in ["goods", "labour", "hire", "anything"] {
-        assert_eq!(project.prices.tax_of(class), Percent::from_ratio(Decimal::new(21, 2)), "{class}");
-    }
+    let rates: Vec<_> =
+        project.prices.tax.iter().map(|(class, rate)| (class.as_str(), rate.ratio())).collect();
+    assert_eq!(rates, [("goods", Decimal::new(21, 2))]);
 }
 
 #[test]
