@@ -165,6 +165,18 @@ impl Problems {
         self.list.is_empty()
     }
 
+    /// Each problem once, however often it was met.
+    #[must_use]
+    pub fn deduplicated(self) -> Self {
+        let mut kept: Vec<Problem> = Vec::new();
+        for problem in self.list {
+            if !kept.contains(&problem) {
+                kept.push(problem);
+            }
+        }
+        Self { list: kept }
+    }
+
     /// All of them by file, line and column, errors before warnings at one place; those without a place last.
     pub fn sorted(&self) -> Vec<&Problem> {
         let mut all: Vec<&Problem> = self.list.iter().collect();

@@ -10,7 +10,7 @@ use crate::units::ElectricalLength;
 
 /// The seats from the left, `spacing` apart, the row centred.
 ///
-/// `steer` > 0 turns the beam clockwise: the group at v gets the delay (v − v_min)·sin(steer), measured from the group
+/// `steer` > 0 turns the beam clockwise: the group at v gets the delay `(v − v_min)·sin(steer)`, measured from the group
 /// on the side that the beam turns to.
 #[expect(clippy::cast_precision_loss, reason = "a handful of groups")]
 pub fn expand(spec: &BroadsideSpec) -> Stage {

@@ -90,7 +90,7 @@ pub fn three(phasing: &Phasing, step: Length, ratio: Decimal, design: Frequency)
 /// undelayed leg and inverters with the least total delay (ties: fewer inverters, then file order).
 pub fn given(weights: &[Weight], design: Frequency) -> Phased {
     let plan = least_delays(weights);
-    let largest = weights.iter().map(|w| amplitude(w)).fold(0.0, f64::max);
+    let largest = weights.iter().map(amplitude).fold(0.0, f64::max);
     let wavelength = design.wavelength_m();
     let mut design_weights = Vec::new();
     let mut legs = Vec::new();

@@ -9,7 +9,7 @@ use crate::units::{Length, Money};
 pub fn plan(job: &CutJob) -> CutPlan {
     let items = items(job);
     let mut on_hand: Vec<CutReel> = job.stock.iter().filter_map(on_hand_reel).collect();
-    on_hand.sort_by(|a, b| a.length.cmp(&b.length));
+    on_hand.sort_by_key(|reel| reel.length);
     let (reels, rest) = fill_on_hand(job, on_hand, items);
     let bought = job
         .stock
@@ -168,7 +168,9 @@ fn one_order(
     }
     let length = step * i64::try_from(steps).unwrap_or(i64::MAX);
     let mut reel = empty(ReelSource::Bought(offer.to_owned()), length);
-    rest.iter().for_each(|bundle| put(&mut reel, bundle, job.loss_per_cut));
+    for bundle in rest {
+        put(&mut reel, bundle, job.loss_per_cut);
+    }
     let cost = price.map(|price| price.times(rust_decimal::Decimal::from(steps)));
     Purchase { reels: vec![reel], unplaced: Vec::new(), cost }
 }

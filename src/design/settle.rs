@@ -64,20 +64,7 @@ pub fn settle(project: &Project, catalogue: &Catalogue) -> Settled {
     if problems.has_errors() {
         designs.clear();
     }
-    Settled { designs, problems: deduplicated(problems) }
-}
-
-/// An array that belongs to every option is settled once an option: its problems are said once.
-fn deduplicated(problems: Problems) -> Problems {
-    let mut seen: Vec<Problem> = Vec::new();
-    for problem in problems.sorted() {
-        if !seen.contains(problem) {
-            seen.push(problem.clone());
-        }
-    }
-    let mut kept = Problems::default();
-    seen.into_iter().for_each(|problem| kept.push(problem));
-    kept
+    Settled { designs, problems: problems.deduplicated() }
 }
 
 fn route_factor_on(project: &Project, catalogue: &Catalogue) -> Option<Decimal> {

@@ -135,13 +135,13 @@ fn trim_step(allowances: &Allowances<'_>, finished: Length, cut: Length) -> Stri
 }
 
 /// Straight, routed and the unrounded reach of a line that is laid.
-struct Reach {
+struct Way {
     straight: Length,
     routed: Length,
     reach: Length,
 }
 
-fn reach_of(layout: &Layout, line: &Line, allowances: &Allowances<'_>) -> Reach {
+fn reach_of(layout: &Layout, line: &Line, allowances: &Allowances<'_>) -> Way {
     let (from, to) = (layout.point(line.termini.from), layout.point(line.termini.to));
     let straight = match line.role {
         LineRole::Main => Length::from_metres_nearest(from.site.distance_m(to.site)),
@@ -155,7 +155,7 @@ fn reach_of(layout: &Layout, line: &Line, allowances: &Allowances<'_>) -> Reach 
         + allowances.burial_slack(routed)
         + allowances.ends()
         + allowances.practice.choke_coax * i64::from(chokes);
-    Reach { straight, routed, reach }
+    Way { straight, routed, reach }
 }
 
 /// Common-mode chokes of a line: one a branch, one a run, two a main (common practice, no source).
@@ -206,7 +206,7 @@ fn laid_length(
     }
 }
 
-fn reach_steps(own: &Reach, line: &Line, allowances: &Allowances<'_>) -> Vec<String> {
+fn reach_steps(own: &Way, line: &Line, allowances: &Allowances<'_>) -> Vec<String> {
     let mut steps = vec![format!(
         "{} straight × route factor {} = {} routed",
         own.straight,

@@ -25,7 +25,7 @@ impl Takeoff {
     }
 
     /// The pieces of a role.
-    pub fn pieces_of<'a>(&'a self, role: PieceRole) -> impl Iterator<Item = &'a Piece> + 'a {
+    pub fn pieces_of(&self, role: PieceRole) -> impl Iterator<Item = &Piece> {
         self.pieces.iter().filter(move |piece| piece.role == role)
     }
 }

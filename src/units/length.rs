@@ -59,12 +59,14 @@ impl Length {
     }
 
     /// This length times an exact decimal ratio, rounded up to the millimetre (a reach or a routed length).
+    #[must_use]
     pub fn times_up(self, ratio: Decimal) -> Self {
         let product = Decimal::from(self.mm).saturating_mul(ratio).ceil();
         Self { mm: product.to_i64().unwrap_or(i64::MAX) }
     }
 
     /// This length rounded up to a multiple of `step`; unchanged when `step` is zero or less.
+    #[must_use]
     pub fn up_to(self, step: Self) -> Self {
         Self { mm: ceil_to_step(self.mm, step.mm) }
     }
@@ -75,6 +77,7 @@ impl Length {
     }
 
     /// The distance without its sign.
+    #[must_use]
     pub const fn abs(self) -> Self {
         Self { mm: self.mm.abs() }
     }

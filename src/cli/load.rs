@@ -1,0 +1,266 @@
+//! Reads project, stock and catalogue from disk and runs the stages.
+
+use std::fmt::Write as _;
+use std::fs;
+use std::path::{Path, PathBuf};
+
+use sha2::{Digest, Sha256};
+
+use super::failure::{Failure, Outcome};
+use super::{CatalogueArgs, ProjectArgs};
+use crate::catalogue::{self, Catalogue, CatalogueFile, Source};
+use crate::design;
+use crate::pricing;
+use crate::problem::Problems;
+use crate::project::{self, Project};
+use crate::report::OptionResult;
+use crate::takeoff;
+
+/// The files that a catalogue folder may hold.
+const CATALOGUE_FILES: [&str; 5] = ["parts.csv", "offers.csv", "cables.csv", "labour.csv", "terrain.csv"];
+
+/// Everything worked out for a project.
+pub(super) struct Work {
+    /// The project.
+    pub(super) project: Project,
+    /// The catalogue it was priced with.
+    pub(super) catalogue: Catalogue,
+    /// One result an option.
+    pub(super) results: Vec<OptionResult>,
+    /// Warnings.
+    pub(super) problems: Problems,
+    /// Short hash of project, stock, catalogue and program.
+    pub(super) hash: String,
+}
+
+impl Work {
+    /// Whether a price is missing.
+    pub(super) fn outcome(&self) -> Outcome {
+        if self.results.iter().all(|result| result.bill.unpriced.is_empty()) {
+            Outcome::Done
+        } else {
+            Outcome::Unpriced
+        }
+    }
+
+    /// What must be said beside any price.
+    pub(super) fn notes(&self) -> Vec<String> {
+        let built_in = |line: &pricing::BillLine| {
+            let offer = line.offer.as_ref().and_then(|id| self.catalogue.offers.get(id));
+            offer.is_some_and(|offer| offer.source == Source::BuiltIn)
+        };
+        let lines = self.results.iter().flat_map(|result| &result.bill.lines);
+        if lines.filter(|line| built_in(line)).count() > 0 {
+            vec!["prices of the built-in catalogue are invented round examples: put your own in a parts-catalog folder beside the project".to_owned()]
+        } else {
+            Vec::new()
+        }
+    }
+
+    /// Adds the results of another project.
+    pub(super) fn join(&mut self, other: Self) {
+        self.results.extend(other.results);
+        self.problems.extend(other.problems);
+        self.hash = short_hash(&[self.hash.as_bytes(), other.hash.as_bytes()]);
+    }
+}
+
+/// What `check` knows, whether or not the project can be built.
+pub(super) struct Checked {
+    /// The project, when it could be read.
+    pub(super) project: Option<Project>,
+    /// Everything noticed.
+    pub(super) problems: Problems,
+    /// Sentences for the answer.
+    pub(super) remarks: Vec<String>,
+    /// Short hash of the inputs.
+    pub(super) hash: String,
+}
+
+/// Reads and works out a project; errors anywhere end it.
+pub(super) fn work(arguments: &ProjectArgs) -> Result<Work, Failure> {
+    let (checked, work) = read_and_work(arguments)?;
+    work.ok_or(Failure::Problems(checked.problems))
+}
+
+/// Reads a project and everything that can be checked of it.
+pub(super) fn check(arguments: &ProjectArgs) -> Result<Checked, Failure> {
+    let (mut checked, work) = read_and_work(arguments)?;
+    if let Some(work) = work {
+        checked.problems = work.problems;
+        checked.project = Some(work.project);
+    }
+    Ok(checked)
+}
+
+fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Failure> {
+    let files = ProjectFiles::read(&arguments.file)?;
+    let stock = files.stock.as_ref().map(|(name, text)| (name.as_str(), text.as_str()));
+    let (project, mut problems) = project::read(&files.name, &files.text, stock);
+    let supply = Supply::read(&arguments.catalogue, &files.folder)?;
+    problems.extend(supply.problems);
+    let hash = files.hash(&supply.inputs);
+    let mut checked = Checked { project: project.clone(), problems: problems.clone(), remarks: Vec::new(), hash };
+    let Some(project) = project else { return Ok((checked, None)) };
+    if checked.problems.has_errors() {
+        return Ok((checked, None));
+    }
+    let catalogue = supply.catalogue;
+    let settled = design::settle(&project, &catalogue);
+    problems.extend(settled.problems);
+    let wanted = wanted_options(&project, arguments.option.as_deref())?;
+    let mut results = Vec::new();
+    for design in settled.designs.into_iter().filter(|design| wanted.contains(&design.option)) {
+        let takeoff = takeoff::take_off(&project, &catalogue, &design);
+        let (bill, noticed) = pricing::price(&project, &catalogue, &takeoff);
+        problems.extend(noticed);
+        results.push(OptionResult { design, takeoff, bill });
+    }
+    let problems = problems.deduplicated();
+    checked.problems = problems.clone();
+    if problems.has_errors() {
+        return Ok((checked, None));
+    }
+    let hash = checked.hash.clone();
+    Ok((checked, Some(Work { project, catalogue, results, problems, hash })))
+}
+
+fn wanted_options(project: &Project, wanted: Option<&str>) -> Result<Vec<String>, Failure> {
+    let options = project.options();
+    match wanted {
+        None => Ok(options),
+        Some(name) if options.iter().any(|option| option == name) => Ok(vec![name.to_owned()]),
+        Some(name) => {
+            let known: Vec<&str> = options.iter().map(String::as_str).filter(|option| !option.is_empty()).collect();
+            let known = if known.is_empty() { "none".to_owned() } else { known.join(", ") };
+            Err(Failure::Usage(format!("this project has no option `{name}`; it has: {known}")))
+        }
+    }
+}
+
+/// The project file and the stock beside it.
+struct ProjectFiles {
+    folder: PathBuf,
+    name: String,
+    text: String,
+    stock: Option<(String, String)>,
+}
+
+impl ProjectFiles {
+    fn read(file: &Path) -> Result<Self, Failure> {
+        let path = if file.is_dir() { file.join("project.toml") } else { file.to_owned() };
+        let text = read_text(&path)?;
+        let folder = path.parent().map(Path::to_path_buf).unwrap_or_default();
+        let stock_path = folder.join("on-hand.csv");
+        let stock = if stock_path.is_file() {
+            Some((stock_path.display().to_string(), read_text(&stock_path)?))
+        } else {
+            None
+        };
+        Ok(Self { folder, name: path.display().to_string(), text, stock })
+    }
+
+    /// Of contents only: the same files give the same hash wherever they lie.
+    fn hash(&self, catalogue: &[Vec<u8>]) -> String {
+        let stock = self.stock.as_ref().map_or("", |(_, text)| text);
+        let mut inputs: Vec<&[u8]> =
+            vec![env!("CARGO_PKG_VERSION").as_bytes(), self.text.as_bytes(), stock.as_bytes()];
+        inputs.extend(catalogue.iter().map(Vec::as_slice));
+        short_hash(&inputs)
+    }
+}
+
+fn read_text(path: &Path) -> Result<String, Failure> {
+    let bytes = fs::read(path).map_err(|error| Failure::file(path, "read", &error))?;
+    match String::from_utf8(bytes) {
+        Ok(text) => Ok(text.strip_prefix('\u{feff}').map_or_else(|| text.clone(), str::to_owned)),
+        Err(error) => {
+            let at = error.utf8_error().valid_up_to();
+            Err(Failure::File(format!("cannot read {}: byte {at} is not UTF-8; save it as UTF-8", path.display())))
+        }
+    }
+}
+
+/// The first eight hexadecimal digits of a SHA-256 over the inputs and their lengths.
+fn short_hash(inputs: &[&[u8]]) -> String {
+    let mut hasher = Sha256::new();
+    for input in inputs {
+        hasher.update((input.len() as u64).to_be_bytes());
+        hasher.update(input);
+    }
+    hasher.finalize().iter().take(4).fold(String::new(), |mut hex, byte| {
+        let _ = write!(hex, "{byte:02x}");
+        hex
+    })
+}
+
+/// A catalogue as the command line asks for it.
+pub(super) struct Supply {
+    /// The catalogue.
+    pub(super) catalogue: Catalogue,
+    /// What is wrong with the user's own files.
+    pub(super) problems: Problems,
+    /// Silent repairs, in words.
+    pub(super) repairs: Vec<String>,
+    /// The user's files read, by name.
+    pub(super) read: Vec<String>,
+    inputs: Vec<Vec<u8>>,
+}
+
+impl Supply {
+    /// The built-in catalogue, laid over by `--catalog` or by a `parts-catalog` folder beside the project, or replaced
+    /// by `--catalog-only`.
+    pub(super) fn read(arguments: &CatalogueArgs, beside: &Path) -> Result<Self, Failure> {
+        let own = beside.join("parts-catalog");
+        let folder = match (&arguments.catalog_only, &arguments.catalog) {
+            (Some(folder), _) | (None, Some(folder)) => Some(folder.clone()),
+            (None, None) => own.is_dir().then_some(own),
+        };
+        let Some(folder) = folder else {
+            let catalogue = catalogue::built_in();
+            return Ok(Self {
+                catalogue,
+                problems: Problems::default(),
+                repairs: Vec::new(),
+                read: Vec::new(),
+                inputs: Vec::new(),
+            });
+        };
+        let files = catalogue_files(&folder)?;
+        let read = files.iter().map(|file| file.name.clone()).collect();
+        let reading = catalogue::read(&files, Source::User);
+        let mut problems = reading.problems;
+        let catalogue = if arguments.catalog_only.is_some() {
+            reading.catalogue
+        } else {
+            catalogue::overlay(catalogue::built_in(), reading.catalogue)
+        };
+        problems.extend(catalogue::cross_check(&catalogue));
+        let inputs = files.into_iter().map(|file| file.bytes).collect();
+        Ok(Self { catalogue, problems, repairs: reading.fixes.in_words(), read, inputs })
+    }
+}
+
+fn catalogue_files(folder: &Path) -> Result<Vec<CatalogueFile>, Failure> {
+    let mut files = Vec::new();
+    for name in CATALOGUE_FILES {
+        let path = folder.join(name);
+        match fs::read(&path) {
+            Ok(bytes) => files.push(CatalogueFile { name: name.to_owned(), bytes }),
+            Err(error) if error.kind() == std::io::ErrorKind::NotFound => {}
+            Err(error) => return Err(Failure::file(&path, "read", &error)),
+        }
+    }
+    if files.is_empty() {
+        let wanted = CATALOGUE_FILES.join(", ");
+        return Err(Failure::File(format!("{} holds none of {wanted}", folder.display())));
+    }
+    Ok(files)
+}
+
+/// The name of a project for people: its file name without ending, or its folder's name.
+pub(super) fn stem(file: &Path) -> String {
+    let named = if file.file_name().is_some_and(|name| name == "project.toml") { file.parent() } else { Some(file) };
+    let stem = named.and_then(Path::file_stem).map(|stem| stem.to_string_lossy().into_owned());
+    stem.unwrap_or_else(|| "project".to_owned())
+}
