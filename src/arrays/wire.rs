@@ -1,5 +1,6 @@
 //! `element.wire`: a terminated low wire, feed point at the rear, termination in front.
 
+use crate::plan::layout::Support;
 use crate::plan::{
     EarthSet, EarthUse, Element, ElementId, ElementKind, Fixture, Layout, PointKind, Position, Span,
     WireElement,
@@ -22,7 +23,8 @@ pub fn add(
     let element = ElementId(layout.elements.len());
     let along = |metres: f64| at.plus(Position::from_metres(metres, 0.0));
     let earth = Fixture::Earth(EarthSet { serves: EarthUse::WireEnd, nearest_other: None });
-    let end = Fixture::WireEnd(spec.supports);
+    let support = Support { kind: spec.supports, height: spec.height };
+    let end = Fixture::WireEnd(support);
     let bays = spec.length.steps_of(max_bay).max(1);
     let from = layout.add_point(
         format!("{name}-F"),
@@ -32,12 +34,7 @@ pub fn add(
     );
     for post in 1..bays {
         let place = along(spec.length.metres() * post as f64 / bays as f64);
-        layout.add_point(
-            format!("{name}-P{post}"),
-            PointKind::Post,
-            place,
-            vec![Fixture::WirePost(spec.supports)],
-        );
+        layout.add_point(format!("{name}-P{post}"), PointKind::Post, place, vec![Fixture::WirePost(support)]);
     }
     let to = layout.add_point(
         format!("{name}-T"),

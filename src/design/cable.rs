@@ -34,6 +34,8 @@ pub struct CablePart {
     pub data: Option<Cable>,
     /// Its connector family, such as `f`.
     pub plug: Option<String>,
+    /// Its series, which decides which plugs fit.
+    pub series: Option<String>,
 }
 
 impl Cables {
@@ -113,12 +115,13 @@ fn cable_part(
 ) -> CablePart {
     let Some(part) = part else {
         let part = PartChoice::Missing("cable".to_owned());
-        return CablePart { part, velocity: unit_velocity(), data: None, plug: None };
+        return CablePart { part, velocity: unit_velocity(), data: None, plug: None, series: None };
     };
     let data = catalogue.cables.get(&part.id).cloned();
     let velocity = data.as_ref().and_then(|cable| velocity_of(cable, design));
     let choice = PartChoice::Part(part.id.clone());
     let plug = part.attribute("plug").map(str::to_owned);
+    let series = part.attribute("series").map(str::to_owned);
     if velocity.is_none() && part.role == "cable" {
         let place = spec.places.feed.get(key).cloned().or_else(|| spec.places.name.clone());
         let message =
@@ -126,7 +129,7 @@ fn cable_part(
         let help = "give `velocity_factor` in its row of cables.csv".to_owned();
         problems.push(Problem::error(code::NO_VELOCITY_FACTOR, place, message, help));
     }
-    CablePart { part: choice, velocity: velocity.unwrap_or_else(unit_velocity), data, plug }
+    CablePart { part: choice, velocity: velocity.unwrap_or_else(unit_velocity), data, plug, series }
 }
 
 fn velocity_of(cable: &Cable, design: Frequency) -> Option<VelocityFactor> {

@@ -106,9 +106,9 @@ impl PointKind {
 #[derive(Clone, Debug, PartialEq)]
 pub enum Fixture {
     /// The end of a wire: support, insulator, backstay.
-    WireEnd(Supports),
+    WireEnd(Support),
     /// A support between the ends, with its insulator.
-    WirePost(Supports),
+    WirePost(Support),
     /// A feed box for a wire, with its surge device.
     WireFeedBox,
     /// A termination box, with its surge device.
@@ -121,6 +121,15 @@ pub enum Fixture {
     HubBox(Shelter),
     /// The station entry: panel, arresters, earth.
     StationEntry,
+}
+
+/// What holds a wire up at one point.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Support {
+    /// Post or tree.
+    pub kind: Supports,
+    /// Height of the wire above ground.
+    pub height: Length,
 }
 
 /// Whether a box stands outdoors.

@@ -81,7 +81,17 @@ fn electrical(scene: &Scene<'_>, line: &Line, length: &LineLength, cable: &Cable
 }
 
 fn connector(cable: &CablePart) -> Want {
-    cable.plug.as_ref().map_or_else(Want::any, |plug| Want::any().with("plug", plug.clone()))
+    cable.series.iter().fold(family(cable, "plug"), |want, series| want.with("series", series.clone()))
+}
+
+/// The connector family of a cable, as the attribute `key`.
+fn family(cable: &CablePart, key: &'static str) -> Want {
+    cable.plug.iter().fold(Want::any(), |want, plug| want.with(key, plug.clone()))
+}
+
+fn impedance(cable: &CablePart) -> Want {
+    let z0 = cable.data.as_ref().and_then(|data| data.z0_ohm);
+    z0.iter().fold(Want::any(), |want, z0| want.with("z_ohm", z0.normalize().to_string()))
 }
 
 fn add_plugs(tally: &mut Tally<'_>, array: &ArrayDesign, line: &Line, cable: &CablePart) {
@@ -96,9 +106,9 @@ fn add_barrel(tally: &mut Tally<'_>, array: &ArrayDesign, line: &Line, cable: &C
     let place = &array.plan.layout.point(line.termini.from).name;
     let leg = array.cables.of(LineRole::Branch);
     if leg.plug == cable.plug || leg.plug.is_none() || cable.plug.is_none() {
-        tally.add("barrel", &connector(cable), place, 1, "joins a delay line to its leg, in line");
+        tally.add("barrel", &family(cable, "plug"), place, 1, "joins a delay line to its leg, in line");
     } else {
-        let want = connector(cable);
+        let want = cable.plug.iter().fold(family(leg, "from"), |want, plug| want.with("to", plug.clone()));
         tally.add("adaptor", &want, place, 1, "joins a delay line to a leg of another connector family");
     }
 }
@@ -106,8 +116,9 @@ fn add_barrel(tally: &mut Tally<'_>, array: &ArrayDesign, line: &Line, cable: &C
 fn add_chokes(tally: &mut Tally<'_>, array: &ArrayDesign, line: &Line) {
     let layout = &array.plan.layout;
     let name = |id| &layout.point(id).name;
+    let want = impedance(array.cables.of(line.role));
     let one = |tally: &mut Tally<'_>, place: &str, why: &str| {
-        tally.add("choke", &Want::any(), place, 1, why);
+        tally.add("choke", &want, place, 1, why);
     };
     match chokes_on(line.role) {
         0 => {}

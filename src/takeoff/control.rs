@@ -145,6 +145,6 @@ fn cable_beside(
 fn control_part(tally: &Tally<'_>, array: &ArrayDesign, conductors: u32) -> PartChoice {
     match &array.spec.feed.control {
         Some(_) => array.cables.control.clone(),
-        None => tally.least_conductors(conductors),
+        None => tally.choose("control-cable", &Want::any().at_least("conductors", conductors.into())),
     }
 }

@@ -161,7 +161,7 @@ fn bond(tally: &Tally<'_>, scene: &Scene<'_>, point: &Point, rods: u32) -> Piece
     plain_piece(
         format!("{}-E", point.name),
         PieceRole::BondWire,
-        tally.choose("radial-wire", &Want::any().with("use", "bonding")),
+        tally.choose("radial-wire", &Want::any()),
         (&point.name, &point.name),
         length,
         Reason::one(why),

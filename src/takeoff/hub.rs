@@ -31,7 +31,9 @@ fn boxed(tally: &mut Tally<'_>, array: &ArrayDesign, hub: &Hub) {
     let point = array.plan.layout.point(hub.point);
     let sockets = sockets(array, hub);
     let why = format!("hub box with {sockets} sockets");
-    tally.add("hub-box", &Want::any(), &point.name, 1, &why);
+    let want =
+        Want::any().with("z_ohm", super::support::coax_impedance(array)).at_least("ways", sockets.into());
+    tally.add("hub-box", &want, &point.name, 1, &why);
     let outdoors = point.fixtures.contains(&Fixture::HubBox(Shelter::Outdoors));
     if outdoors {
         let why = "surge rod with its clamp at a hub outdoors, at least 5 m from every antenna earth, never joined to it";

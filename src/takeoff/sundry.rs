@@ -26,13 +26,7 @@ pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>) {
         tally.add("marker", &Want::any(), "", marks, "one for each 10 m of cable route");
         if surface {
             let staples = routed.steps_of(COAX_STAPLE_EACH);
-            tally.add(
-                "consumable",
-                &kind("staple"),
-                "",
-                staples,
-                "one for each 1.5 m of cable on the surface",
-            );
+            tally.add("consumable", &kind("peg"), "", staples, "one for each 1.5 m of cable on the surface");
         }
     }
     let radials: Vec<Length> =

@@ -2,6 +2,7 @@
 
 use super::tally::{Tally, Want};
 use super::{ArrayDesign, Scene};
+use crate::plan::layout::Support;
 use crate::plan::{Fixture, Point};
 use crate::project::Supports;
 
@@ -11,8 +12,8 @@ pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>, array: &ArrayDe
     for point in &array.plan.layout.points {
         for fixture in &point.fixtures {
             match fixture {
-                Fixture::WireEnd(supports) => end(tally, point, *supports),
-                Fixture::WirePost(supports) => post(tally, point, *supports, &array.bay_reason),
+                Fixture::WireEnd(support) => end(tally, point, *support),
+                Fixture::WirePost(support) => post(tally, point, *support, &array.bay_reason),
                 Fixture::WireFeedBox => {
                     let want = Want::any().with("element", "wire").with("z_ohm", z0.clone());
                     tally.add("feed-box", &want, &point.name, 1, "feed box at the feed point of a wire");
@@ -46,31 +47,31 @@ fn surge(tally: &mut Tally<'_>, point: &Point) {
     tally.add("surge-device", &Want::any(), &point.name, 1, why);
 }
 
-fn end(tally: &mut Tally<'_>, point: &Point, supports: Supports) {
-    match supports {
+/// A post that is high enough.
+fn post_for(support: Support) -> Want {
+    Want::any().at_least("height", support.height.decimal_metres())
+}
+
+fn end(tally: &mut Tally<'_>, point: &Point, support: Support) {
+    match support.kind {
         Supports::Posts => {
-            tally.add("end-support", &Want::any(), &point.name, 1, "post at the end of a wire");
+            tally.add("end-support", &post_for(support), &point.name, 1, "post at the end of a wire");
             let why = "end posts take the wire's tension";
             tally.add("backstay", &Want::any(), &point.name, 1, why);
         }
         Supports::Trees => {
-            tally.add(
-                "tree-support",
-                &Want::any(),
-                &point.name,
-                1,
-                "tree at the end of a wire, with pulley and weight",
-            );
+            let why = "tree at the end of a wire, with pulley and weight";
+            tally.add("tree-support", &Want::any(), &point.name, 1, why);
         }
     }
     tally.add("end-insulator", &Want::any(), &point.name, 1, "insulator at the end of a wire");
 }
 
-fn post(tally: &mut Tally<'_>, point: &Point, supports: Supports, bay_reason: &str) {
-    match supports {
+fn post(tally: &mut Tally<'_>, point: &Point, support: Support, bay_reason: &str) {
+    match support.kind {
         Supports::Posts => {
             let why = format!("post between bays ({bay_reason})");
-            tally.add("mid-support", &Want::any(), &point.name, 1, &why);
+            tally.add("mid-support", &post_for(support), &point.name, 1, &why);
         }
         Supports::Trees => {
             let why = format!("tree between bays, with slip tie ({bay_reason})");

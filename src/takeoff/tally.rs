@@ -1,5 +1,6 @@
 //! Where the parts of the takeoff put what they count.
 
+use std::cmp::Reverse;
 use std::collections::BTreeMap;
 
 use rust_decimal::Decimal;
@@ -27,10 +28,11 @@ pub(super) struct Tally<'a> {
 /// A role and the part that serves it.
 pub(super) type Key = (String, PartChoice);
 
-/// Which part of a role is wanted.
+/// Which part of a role is wanted. A part that does not say is taken to fit, after those that do.
 #[derive(Clone, Debug, Default)]
 pub(super) struct Want {
-    pairs: Vec<(&'static str, String)>,
+    equal: Vec<(&'static str, String)>,
+    at_least: Vec<(&'static str, Decimal)>,
 }
 
 impl Want {
@@ -39,19 +41,38 @@ impl Want {
         Self::default()
     }
 
-    /// A part with this attribute, or one that does not say.
+    /// A part with this attribute.
     pub(super) fn with(mut self, key: &'static str, value: impl Into<String>) -> Self {
-        self.pairs.push((key, value.into()));
+        self.equal.push((key, value.into()));
+        self
+    }
+
+    /// A part with at least this much of an attribute; the least that is enough is taken.
+    pub(super) fn at_least(mut self, key: &'static str, value: Decimal) -> Self {
+        self.at_least.push((key, value));
         self
     }
 
     fn fits(&self, part: &Part) -> bool {
-        self.pairs.iter().all(|(key, value)| part.attribute(key).is_none_or(|own| same(own, value)))
+        let equal = |(key, value): &(&str, String)| part.attribute(key).is_none_or(|own| same(own, value));
+        let enough = |(key, value): &(&str, Decimal)| part.number(key).is_none_or(|own| own >= *value);
+        self.equal.iter().all(equal) && self.at_least.iter().all(enough)
+    }
+
+    /// Parts that say what was asked come first, then the least that is enough, then the default, then by id.
+    fn rank(&self, part: &Part) -> (Reverse<usize>, Vec<Decimal>, bool, String) {
+        let said = self.equal.iter().filter(|(key, _)| part.attribute(key).is_some()).count()
+            + self.at_least.iter().filter(|(key, _)| part.number(key).is_some()).count();
+        let amounts = self.at_least.iter().filter_map(|(key, _)| part.number(key)).collect();
+        let other = part.attribute("default") != Some("yes");
+        (Reverse(said), amounts, other, part.id.clone())
     }
 
     /// The name of what is missing: the role with what was wanted of it.
     fn name(&self, role: &str) -> String {
-        self.pairs.iter().fold(role.to_owned(), |name, (_, value)| format!("{name}-{value}"))
+        let equal = self.equal.iter().map(|(_, value)| value.clone());
+        let amounts = self.at_least.iter().map(|(key, value)| format!("{key}-{}", value.normalize()));
+        equal.chain(amounts).fold(role.to_owned(), |name, word| format!("{name}-{word}"))
     }
 }
 
@@ -99,24 +120,12 @@ impl<'a> Tally<'a> {
         self.found.entry((role.to_owned(), part)).or_default().push(contribution);
     }
 
-    /// The part of a role that fits, by the catalogue's own rule.
+    /// The part of a role that fits best; never the cheapest, which would change when a price changes.
     pub(super) fn choose(&self, role: &str, want: &Want) -> PartChoice {
-        match self.catalogue.default_part_with(role, |part| want.fits(part)) {
+        let fitting = self.catalogue.parts.values().filter(|part| part.role == role && want.fits(part));
+        match fitting.min_by_key(|part| want.rank(part)) {
             Some(part) => PartChoice::Part(part.id.clone()),
             None => PartChoice::Missing(want.name(role)),
-        }
-    }
-
-    /// The control cable with the fewest conductors that are enough.
-    pub(super) fn least_conductors(&self, conductors: u32) -> PartChoice {
-        let wanted = Decimal::from(conductors);
-        let parts = self.catalogue.parts.values().filter(|part| part.role == "control-cable");
-        let enough = parts.filter_map(|part| part.number("conductors").map(|own| (own, part)));
-        let least =
-            enough.filter(|(own, _)| *own >= wanted).min_by_key(|(own, part)| (*own, part.id.clone()));
-        match least {
-            Some((_, part)) => PartChoice::Part(part.id.clone()),
-            None => PartChoice::Missing(format!("control-cable-{conductors}")),
         }
     }
 

@@ -42,7 +42,8 @@ fn mast(tally: &mut Tally<'_>, point: &Point, foot: MastFoot, z0: &str) {
     }
     if foot.height > GUYED_ABOVE {
         let why = format!("verticals above {GUYED_ABOVE} have three guys of {}", guy_length(foot.height));
-        tally.add("guy", &Want::any(), place, 3, &why);
+        let want = Want::any().at_least("length", guy_length(foot.height).decimal_metres());
+        tally.add("guy", &want, place, 3, &why);
         tally.add("guy-anchor", &Want::any(), place, 3, "an anchor for each guy");
     }
 }
