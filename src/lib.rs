@@ -7,5 +7,6 @@ pub mod plan;
 pub mod pricing;
 pub mod problem;
 pub mod project;
+pub mod radio;
 pub mod takeoff;
 pub mod units;
