@@ -194,6 +194,25 @@ impl Quotient {
         Self { correlation, towards }
     }
 
+    /// For an array that is used once: only the matrix and one direction, no pattern grid.
+    ///
+    /// # Errors
+    /// As [`super::Response::new`].
+    pub fn build(
+        elements: &[RadioElement],
+        soil: Soil,
+        frequency: Frequency,
+        elevation_deg: f64,
+    ) -> Result<Self, RadioError> {
+        check(elements, soil, frequency)?;
+        let scanner = Scanner::new(elements, soil, frequency);
+        let mut towards = Vec::new();
+        scanner.scan(&[(90.0 - elevation_deg).to_radians()], &[0.0], |_, _, fields, _| {
+            towards = fields.iter().map(|field| field.theta).collect();
+        });
+        Ok(Self::new(Correlation::of(&scanner, extent_wavelengths(elements, frequency)), towards))
+    }
+
     /// RDF in dB: 10 lg(|wᵀv|² / wᵀBw*).
     pub fn rdf_db(&self, weights: &[Complex64]) -> f64 {
         db(combine(&self.towards, weights).norm_sqr() / self.correlation.average(weights))
