@@ -2,10 +2,10 @@
 //!
 //! ```text
 //! project text ─project─▶ Project ─arrays─▶ Layout + FeedTree ─design─▶ Design (choices made, lines measured)
-//!                                                                          │
-//!    CSV files ─catalogue─▶ Catalogue ──────────────┐                      ▼
-//!                                                   ├──────────▶ takeoff ─▶ cutting ─▶ pricing ─▶ report
-//!                                                   │            (every item and piece with its reason)
+//!                                                │                          │
+//!                                                └──reception──▶ radio      ▼
+//!    CSV files ─catalogue─▶ Catalogue ─────────────────────────▶ takeoff ─▶ cutting ─▶ pricing ─▶ report
+//!                                                               (every item and piece with its reason)
 //! ```
 //!
 //! Data flows one way: a module uses only modules above it in this list, and each stage is a pure function of its
@@ -13,10 +13,12 @@
 
 pub mod units;
 pub mod problem;
+pub mod radio;
 pub mod catalogue;
 pub mod project;
 pub mod plan;
 pub mod arrays;
+pub mod reception;
 pub mod design;
 pub mod takeoff;
 pub mod cutting;

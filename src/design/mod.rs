@@ -3,15 +3,13 @@
 //! Best delays are found, the hub amplifier is decided, cables are chosen, and every line has its lengths. Everything
 //! after this module reads a [`Design`] and makes no choice of its own.
 
-mod cable;
 mod settle;
 
 use rust_decimal::Decimal;
 
-pub use cable::{CablePart, Cables};
 pub use settle::{Settled, code, settle};
 
-use crate::plan::{ArrayPlan, LineLength};
+use crate::plan::{ArrayPlan, Cables, LineLength};
 use crate::project::ArraySpec;
 
 /// One option, settled.

@@ -3,11 +3,10 @@
 use rust_decimal::Decimal;
 use rust_decimal::prelude::ToPrimitive;
 
-use super::cable::{self, Cables};
 use super::{ArrayDesign, Design};
 use crate::arrays::{self, Context, HubAmplifier, LineCost, Names};
 use crate::catalogue::Catalogue;
-use crate::plan::{Allowances, measure};
+use crate::plan::{Allowances, choose_cables, measure};
 use crate::problem::{Problem, Problems};
 use crate::project::{
     AmplifierChoice, ArraySpec, DelayRatio, ElementSpec, EndfireStage, Phasing, Project, Terrain,
@@ -17,12 +16,6 @@ use crate::units::{Diameter, Length};
 /// Codes of problems found while settling a design.
 pub mod code {
     crate::problem_codes! {
-        /// `[array.feed]` names a part that the catalogue does not have.
-        UNKNOWN_PART = "unknown-part";
-        /// `[array.feed]` names a part of another role.
-        WRONG_PART_ROLE = "wrong-part-role";
-        /// A cable without velocity factor.
-        NO_VELOCITY_FACTOR = "no-velocity-factor";
         /// The catalogue lacks the site's terrain class.
         NO_TERRAIN_ROW = "no-terrain-row";
         /// The array listens backwards.
@@ -86,7 +79,7 @@ fn settle_array(
     names: &mut Names,
     problems: &mut Problems,
 ) -> ArrayDesign {
-    let cables = cable::choose(spec, catalogue, project.frequency, problems);
+    let cables = choose_cables(spec, catalogue, project.frequency, problems);
     let (max_bay, bay_reason) = longest_bay(project, catalogue, spec);
     let context = Context {
         design: project.frequency,
@@ -233,11 +226,4 @@ fn roles_in_words(stage: &arrays::Stage) -> String {
         )
     });
     format!("roles: {}", rows.collect::<Vec<_>>().join("; "))
-}
-
-impl ArrayDesign {
-    /// The cables, for callers that hold only the array.
-    pub fn cables(&self) -> &Cables {
-        &self.cables
-    }
 }

@@ -1,11 +1,13 @@
 //! The two results of expanding a composition: a layout (named points) and a feed tree, with the lengths of its lines.
 
+pub mod cable;
 pub mod feed;
 pub mod geometry;
 pub mod layout;
 pub mod measure;
 pub mod weight;
 
+pub use cable::{CablePart, Cables, choose as choose_cables};
 pub use feed::{
     Connection, FeedTree, Hub, HubId, Leg, Line, LineId, LineRole, Node, RoleId, State, Switch, Termini,
 };

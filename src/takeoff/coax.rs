@@ -3,8 +3,7 @@
 use super::model::{Piece, PieceElectrical, PieceRole, Reason};
 use super::tally::{Tally, Want};
 use super::{ArrayDesign, Scene};
-use crate::design::CablePart;
-use crate::plan::{Connection, Line, LineId, LineLength, LineRole, chokes_on};
+use crate::plan::{CablePart, Connection, Line, LineId, LineLength, LineRole, chokes_on};
 use crate::units::ElectricalLength;
 
 /// Every line of the feed tree is one piece with two plugs.

@@ -1,12 +1,23 @@
 //! Which part serves which line.
 
 use crate::catalogue::{Cable, Catalogue, Part, PartChoice, VelocityData};
-use crate::plan::LineRole;
 use crate::problem::{Problem, Problems};
 use crate::project::{ArraySpec, FeedSpec};
 use crate::units::{Frequency, VelocityFactor};
 
-use super::settle::code;
+use super::feed::LineRole;
+
+/// Codes of problems found while choosing cables.
+pub mod code {
+    crate::problem_codes! {
+        /// `[array.feed]` names a part that the catalogue does not have.
+        UNKNOWN_PART = "unknown-part";
+        /// `[array.feed]` names a part of another role.
+        WRONG_PART_ROLE = "wrong-part-role";
+        /// A cable without velocity factor.
+        NO_VELOCITY_FACTOR = "no-velocity-factor";
+    }
+}
 
 /// The cables of one array.
 #[derive(Clone, Debug)]
@@ -51,12 +62,7 @@ impl Cables {
 }
 
 /// Chooses the cables of an array: the part named in `[array.feed]`, else the default of the role.
-pub(super) fn choose(
-    spec: &ArraySpec,
-    catalogue: &Catalogue,
-    design: Frequency,
-    problems: &mut Problems,
-) -> Cables {
+pub fn choose(spec: &ArraySpec, catalogue: &Catalogue, design: Frequency, problems: &mut Problems) -> Cables {
     let feed: &FeedSpec = &spec.feed;
     let mut coax = |key: &str, named: &Option<String>| {
         let part = part_for(spec, key, named.as_deref(), "cable", catalogue, problems);

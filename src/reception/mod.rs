@@ -1,0 +1,9 @@
+//! What an expanded array hears: from plan and feed tree to the inputs of `radio`, and back to people's questions.
+//!
+//! The weights come from the same feed tree that the bill counts, so parts list and pattern cannot disagree.
+
+pub mod element;
+pub mod weight;
+
+pub use element::{Ends, elements, soil};
+pub use weight::{LineFigures, built, designed, line_figures, path_loss_db};
