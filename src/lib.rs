@@ -24,4 +24,4 @@ pub mod takeoff;
 pub mod cutting;
 pub mod pricing;
 pub mod report;
-// cli
+pub mod cli;

@@ -1,5 +1,6 @@
 //! `catalog`: the health of a catalogue.
 
+use std::fmt::Write as _;
 use std::path::{Path, PathBuf};
 
 use chrono::NaiveDate;
@@ -81,8 +82,8 @@ fn check(folder: Option<&Path>, alone: bool) -> Result<Outcome, Failure> {
         catalogue.labour.len(),
         catalogue.terrain.len()
     ));
-    for repair in &supply.repairs {
-        text.push_str(&format!("mended while reading: {repair}\n"));
+    for repair in supply.repairs.lines() {
+        let _ = writeln!(text, "{repair}");
     }
     output::text(&text)?;
     if problems.has_errors() { Err(Failure::Said) } else { Ok(Outcome::Done) }

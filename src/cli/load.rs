@@ -16,9 +16,6 @@ use crate::project::{self, Project};
 use crate::report::OptionResult;
 use crate::takeoff;
 
-/// The files that a catalogue folder may hold.
-const CATALOGUE_FILES: [&str; 5] = ["parts.csv", "offers.csv", "cables.csv", "labour.csv", "terrain.csv"];
-
 /// Everything worked out for a project.
 pub(super) struct Work {
     /// The project.
@@ -201,7 +198,7 @@ pub(super) struct Supply {
     /// What is wrong with the user's own files.
     pub(super) problems: Problems,
     /// Silent repairs, in words.
-    pub(super) repairs: Vec<String>,
+    pub(super) repairs: String,
     /// The user's files read, by name.
     pub(super) read: Vec<String>,
     inputs: Vec<Vec<u8>>,
@@ -221,29 +218,23 @@ impl Supply {
             return Ok(Self {
                 catalogue,
                 problems: Problems::default(),
-                repairs: Vec::new(),
+                repairs: String::new(),
                 read: Vec::new(),
                 inputs: Vec::new(),
             });
         };
         let files = catalogue_files(&folder)?;
         let read = files.iter().map(|file| file.name.clone()).collect();
-        let reading = catalogue::read(&files, Source::User);
-        let mut problems = reading.problems;
-        let catalogue = if arguments.catalog_only.is_some() {
-            reading.catalogue
-        } else {
-            catalogue::overlay(catalogue::built_in(), reading.catalogue)
-        };
-        problems.extend(catalogue::cross_check(&catalogue));
+        let base = if arguments.catalog_only.is_some() { Catalogue::default() } else { catalogue::built_in() };
+        let loaded = catalogue::load(base, &files, Source::User);
         let inputs = files.into_iter().map(|file| file.bytes).collect();
-        Ok(Self { catalogue, problems, repairs: reading.fixes.in_words(), read, inputs })
+        Ok(Self { catalogue: loaded.catalogue, problems: loaded.problems, repairs: loaded.fixes.to_string(), read, inputs })
     }
 }
 
 fn catalogue_files(folder: &Path) -> Result<Vec<CatalogueFile>, Failure> {
     let mut files = Vec::new();
-    for name in CATALOGUE_FILES {
+    for name in catalogue::FILES {
         let path = folder.join(name);
         match fs::read(&path) {
             Ok(bytes) => files.push(CatalogueFile { name: name.to_owned(), bytes }),
@@ -252,7 +243,7 @@ fn catalogue_files(folder: &Path) -> Result<Vec<CatalogueFile>, Failure> {
         }
     }
     if files.is_empty() {
-        let wanted = CATALOGUE_FILES.join(", ");
+        let wanted = catalogue::FILES.join(", ");
         return Err(Failure::File(format!("{} holds none of {wanted}", folder.display())));
     }
     Ok(files)
