@@ -197,17 +197,19 @@ pub struct TerrainRow {
 }
 
 impl Catalogue {
-    /// The part for a catalogue role when the project names none: the row with `default=yes`, then the first by
-    /// part id. Never the cheapest, which would change lengths when a price changes.
+    /// The part for a catalogue role when the project names none: the row with `default=yes`, the user's before the
+    /// built-in one, then the first by part id. Never the cheapest, which would change lengths when a price changes.
     pub fn default_part(&self, role: &str) -> Option<&Part> {
         self.default_part_with(role, |_| true)
     }
 
     /// As [`Self::default_part`], among the parts of the role that `fits` accepts.
     pub fn default_part_with(&self, role: &str, fits: impl Fn(&Part) -> bool) -> Option<&Part> {
-        let mut candidates = self.parts.values().filter(|part| part.role == role && fits(part));
-        let first = candidates.clone().next();
-        candidates.find(|part| part.attribute("default") == Some("yes")).or(first)
+        let candidates: Vec<&Part> =
+            self.parts.values().filter(|part| part.role == role && fits(part)).collect();
+        let named = |part: &&&Part| part.attribute("default") == Some("yes");
+        let own = candidates.iter().filter(named).find(|part| part.source == Source::User);
+        own.or_else(|| candidates.iter().find(named)).or(candidates.first()).copied()
     }
 
     /// The offers of a part by id.

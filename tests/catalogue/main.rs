@@ -1,0 +1,8 @@
+//! The catalogue as its users meet it: spreadsheets that damaged it, files laid over the built-in ones.
+
+mod built_in;
+mod lookup;
+mod overlay;
+mod problem;
+mod spreadsheet;
+mod support;
