@@ -241,3 +241,60 @@ fn largest(steps: &[usize], limit: usize) -> usize {
 fn azimuth_rad(column: usize) -> f64 {
     (90.0 + GRID_AZIMUTH_STEP_DEG * column as f64).to_radians()
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::radio::{ElementKind, Position, RadioElement, Response, Soil, Termination};
+    use crate::units::{Diameter, Frequency, Length};
+
+    fn element(x: f64, y: f64, kind: ElementKind) -> RadioElement {
+        RadioElement { position: Position { forward_m: x, right_m: -y }, kind }
+    }
+
+    fn layouts() -> Vec<(f64, Vec<RadioElement>)> {
+        let post = ElementKind::ShortVertical { height: Length::from_mm(6_000) };
+        let wire = ElementKind::LowWire {
+            length: Length::from_mm(176_000),
+            height: Length::from_mm(3_000),
+            diameter: Diameter::from_um(1_600),
+            termination: Termination::Matched,
+        };
+        let three = |y: f64| [0.0, 21.336, 42.672].map(|x| element(x, y, post));
+        let pair = |y: f64| [element(0.0, y, wire), element(18.288, y + 4.572, wire)];
+        vec![
+            (1.83, three(0.0).to_vec()),
+            (1.83, [three(0.0), three(121.92)].concat()),
+            (3.65, [three(0.0), three(121.92)].concat()),
+            (7.1, three(0.0).to_vec()),
+            (1.83, pair(0.0).to_vec()),
+            (1.83, [pair(0.0), pair(121.92)].concat()),
+            (7.1, [pair(0.0), pair(121.92)].concat()),
+        ]
+    }
+
+    /// Weights with phases from the golden angle: no symmetry to help.
+    fn weights(count: usize, draw: u32) -> Vec<Complex64> {
+        (0..count).zip(0_u32..).map(|(_, i)| Complex64::cis(2.399_963 * f64::from(draw * 7 + i))).collect()
+    }
+
+    #[test]
+    fn the_quick_search_finds_the_strongest_point() {
+        let mut scratch = Scratch::default();
+        let (mut missed, mut worst) = (0, 0.0_f64);
+        for (mhz, elements) in layouts() {
+            let response =
+                Response::new(&elements, Soil::AVERAGE, Frequency::from_mhz(mhz)).expect("a legal array");
+            for draw in 0..100 {
+                let weights = weights(elements.len(), draw);
+                let quick = response.rear().strongest_quick(&weights, &mut scratch);
+                let exact = response.rear().strongest(&weights).power;
+                assert!(quick <= exact * (1.0 + 1e-12), "{quick} is above {exact}");
+                let short_db = 10.0 * (exact / quick).log10();
+                worst = worst.max(short_db);
+                missed += i32::from(short_db > 1e-9);
+            }
+        }
+        assert!(missed <= 7 && worst < 0.05, "{missed} of 700 missed, by {worst} dB at most");
+    }
+}

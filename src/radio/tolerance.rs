@@ -2,7 +2,7 @@
 
 use num_complex::Complex64;
 
-use super::directivity::{gain_rel_db, peak};
+use super::directivity::peak;
 use super::monte_carlo::ErrorSize;
 use super::quotient::{combine, db};
 use super::response::Response;
@@ -60,8 +60,9 @@ pub struct RandomErrors {
 
 /// The closed form for independent errors on every element.
 ///
-/// σ² = (0.115129 s_A)² + (0.0174533 s_P)²; floor = 20 lg σ − gain_rel; loss = 10 lg((1 + t A₁/A)/(1 + t P₁/P₀)), t = σ² Σ|w|². The
-/// floor holds in a direction in which one element has its forward strength; elsewhere subtract the element's own pattern.
+/// σ² = (0.115129 s_A)² + (0.0174533 s_P)²; floor = 20 lg σ − G with G the signal over one element at the take-off elevation;
+/// loss = 10 lg((1 + t A₁/A)/(1 + t P₁/P₀)), t = σ² Σ|w|². The floor holds in a direction in which one element is as strong as
+/// towards the forward maximum; elsewhere subtract the element's own pattern.
 /// Within 0.7 dB of drawn errors up to 1 dB and 10°. Principle: Ruze, "The effect of aperture errors on the antenna
 /// radiation pattern", 1952 (from memory).
 pub fn random_errors(response: &Response, weights: &[Complex64], size: ErrorSize) -> RandomErrors {
@@ -78,7 +79,7 @@ pub fn random_errors(response: &Response, weights: &[Complex64], size: ErrorSize
     let forward = 1.0 + variance * ahead / peak.power;
     RandomErrors {
         sigma: variance.sqrt(),
-        rear_floor_db: db(variance) - gain_rel_db(response, weights, &peak),
+        rear_floor_db: db(variance * ahead / peak.power),
         rdf_loss_db: db(spread / forward),
     }
 }

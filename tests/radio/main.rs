@@ -3,4 +3,12 @@
 //! Every module names the source of its numbers.
 
 mod cases;
+mod handbook;
+mod laws;
+mod lines;
+mod reference;
+mod signs;
+mod spread;
 mod support;
+mod trade;
+mod values;
