@@ -234,15 +234,3 @@ impl Part {
         self.number(key).and_then(Length::from_decimal_metres_nearest)
     }
 }
-
-impl Cable {
-    /// The velocity factor at a frequency: the one number, or the points, linear in the logarithm of frequency and flat
-    /// outside.
-    pub fn velocity_at(&self, _frequency: Frequency) -> Option<VelocityFactor> {
-        match &self.velocity_factor {
-            VelocityData::None => None,
-            VelocityData::One(vf) => Some(*vf),
-            VelocityData::Points(points) => points.first().map(|(_, vf)| *vf),
-        }
-    }
-}
