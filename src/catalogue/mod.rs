@@ -29,8 +29,8 @@ mod table;
 mod template;
 
 pub use age::{FRESH_DAYS, age};
-pub use choice::PartChoice;
 pub use built_in::{built_in, built_in_loaded, built_in_texts};
+pub use choice::PartChoice;
 pub use export::{ExportCell, export};
 pub use health::health;
 pub use load::{Loaded, load, overlay};

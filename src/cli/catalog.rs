@@ -91,7 +91,8 @@ fn check(folder: Option<&Path>, alone: bool) -> Result<Outcome, Failure> {
 
 fn age(folder: Option<&Path>, on: NaiveDate) -> Result<Outcome, Failure> {
     let supply = supply(folder, false)?;
-    let priced = supply.catalogue.offers.values().filter_map(|offer| offer.priced_on.map(|date| (date, offer)));
+    let priced =
+        supply.catalogue.offers.values().filter_map(|offer| offer.priced_on.map(|date| (date, offer)));
     let mut dated: Vec<_> = priced.map(|(date, offer)| ((on - date).num_days(), &offer.id)).collect();
     dated.sort_by(|a, b| b.cmp(a));
     let undated = supply.catalogue.offers.values().filter(|offer| offer.priced_on.is_none()).count();

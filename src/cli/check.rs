@@ -19,10 +19,12 @@ pub(super) struct Check {
 impl Check {
     pub(super) fn run(&self) -> Result<Outcome, Failure> {
         let checked = load::check(&self.project)?;
-        let assumptions = checked.project.as_ref().map(|project| project.assumptions.clone()).unwrap_or_default();
+        let assumptions =
+            checked.project.as_ref().map(|project| project.assumptions.clone()).unwrap_or_default();
         let json = machine::check(&checked.hash, &checked.problems, &assumptions);
         let mut sheet = Sheet { answer: vec![verdict(&checked.problems)], ..Sheet::default() };
-        let mut problems = Table::new("problems", &["severity", "code", "line", "what", "what would be right"]);
+        let mut problems =
+            Table::new("problems", &["severity", "code", "line", "what", "what would be right"]);
         for problem in checked.problems.sorted() {
             let place = problem.place.as_ref().map(|p| format!("{}:{}:{}", p.file, p.line, p.column));
             problems.rows.push(vec![
@@ -57,6 +59,10 @@ fn verdict(problems: &Problems) -> String {
         (0, 0) => "this can be built".to_owned(),
         (0, _) => format!("this can be built; {} to read", plural(warnings, "warning")),
         (_, 0) => format!("this cannot be built yet: {}", plural(errors, "error")),
-        _ => format!("this cannot be built yet: {} and {}", plural(errors, "error"), plural(warnings, "warning")),
+        _ => format!(
+            "this cannot be built yet: {} and {}",
+            plural(errors, "error"),
+            plural(warnings, "warning")
+        ),
     }
 }

@@ -97,7 +97,8 @@ fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Fai
     let supply = Supply::read(&arguments.catalogue, &files.folder)?;
     problems.extend(supply.problems);
     let hash = files.hash(&supply.inputs);
-    let mut checked = Checked { project: project.clone(), problems: problems.clone(), remarks: Vec::new(), hash };
+    let mut checked =
+        Checked { project: project.clone(), problems: problems.clone(), remarks: Vec::new(), hash };
     let Some(project) = project else { return Ok((checked, None)) };
     if checked.problems.has_errors() {
         return Ok((checked, None));
@@ -128,7 +129,8 @@ fn wanted_options(project: &Project, wanted: Option<&str>) -> Result<Vec<String>
         None => Ok(options),
         Some(name) if options.iter().any(|option| option == name) => Ok(vec![name.to_owned()]),
         Some(name) => {
-            let known: Vec<&str> = options.iter().map(String::as_str).filter(|option| !option.is_empty()).collect();
+            let known: Vec<&str> =
+                options.iter().map(String::as_str).filter(|option| !option.is_empty()).collect();
             let known = if known.is_empty() { "none".to_owned() } else { known.join(", ") };
             Err(Failure::Usage(format!("this project has no option `{name}`; it has: {known}")))
         }
@@ -173,7 +175,10 @@ fn read_text(path: &Path) -> Result<String, Failure> {
         Ok(text) => Ok(text.strip_prefix('\u{feff}').map_or_else(|| text.clone(), str::to_owned)),
         Err(error) => {
             let at = error.utf8_error().valid_up_to();
-            Err(Failure::File(format!("cannot read {}: byte {at} is not UTF-8; save it as UTF-8", path.display())))
+            Err(Failure::File(format!(
+                "cannot read {}: byte {at} is not UTF-8; save it as UTF-8",
+                path.display()
+            )))
         }
     }
 }
@@ -225,10 +230,17 @@ impl Supply {
         };
         let files = catalogue_files(&folder)?;
         let read = files.iter().map(|file| file.name.clone()).collect();
-        let base = if arguments.catalog_only.is_some() { Catalogue::default() } else { catalogue::built_in() };
+        let base =
+            if arguments.catalog_only.is_some() { Catalogue::default() } else { catalogue::built_in() };
         let loaded = catalogue::load(base, &files, Source::User);
         let inputs = files.into_iter().map(|file| file.bytes).collect();
-        Ok(Self { catalogue: loaded.catalogue, problems: loaded.problems, repairs: loaded.fixes.to_string(), read, inputs })
+        Ok(Self {
+            catalogue: loaded.catalogue,
+            problems: loaded.problems,
+            repairs: loaded.fixes.to_string(),
+            read,
+            inputs,
+        })
     }
 }
 
@@ -251,7 +263,8 @@ fn catalogue_files(folder: &Path) -> Result<Vec<CatalogueFile>, Failure> {
 
 /// The name of a project for people: its file name without ending, or its folder's name.
 pub(super) fn stem(file: &Path) -> String {
-    let named = if file.file_name().is_some_and(|name| name == "project.toml") { file.parent() } else { Some(file) };
+    let named =
+        if file.file_name().is_some_and(|name| name == "project.toml") { file.parent() } else { Some(file) };
     let stem = named.and_then(Path::file_stem).map(|stem| stem.to_string_lossy().into_owned());
     stem.unwrap_or_else(|| "project".to_owned())
 }

@@ -60,11 +60,17 @@ impl Start {
         match &self.output {
             None => output::text(&text)?,
             Some(path) if path.exists() => {
-                return Err(Failure::Usage(format!("{} exists already; choose another name", path.display())));
+                return Err(Failure::Usage(format!(
+                    "{} exists already; choose another name",
+                    path.display()
+                )));
             }
             Some(path) => {
                 output::write_whole(path, &text)?;
-                output::complaint(&format!("wrote {}; edit it, then run `arraywright check {0}`", path.display()));
+                output::complaint(&format!(
+                    "wrote {}; edit it, then run `arraywright check {0}`",
+                    path.display()
+                ));
             }
         }
         Ok(Outcome::Done)

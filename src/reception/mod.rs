@@ -3,7 +3,15 @@
 //! The weights come from the same feed tree that the bill counts, so parts list and pattern cannot disagree.
 
 pub mod element;
+pub mod noise;
+pub mod report;
+pub mod tolerance;
 pub mod weight;
 
 pub use element::{Ends, elements, soil};
+pub use noise::{AmplifierFigures, Noise, NoiseSite};
+pub use report::{
+    ArrayReport, DirectionReport, Figures, FrequencyReport, Subject, Weighting, delay_curve, report,
+};
+pub use tolerance::{Trim, TrimBasis, level_limit_db, tolerances, trim};
 pub use weight::{LineFigures, built, designed, line_figures, path_loss_db};
