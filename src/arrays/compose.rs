@@ -10,7 +10,7 @@ use crate::plan::{
     LineRole, Node, PointId, PointKind, Position, RoleId, State, Switch, Termini,
 };
 use crate::project::{ArraySpec, Combining, DelayStyle, ElementSpec, HubPlace, Join};
-use crate::units::ElectricalLength;
+use crate::units::{Angle, ElectricalLength};
 
 /// Expands one array from its stages.
 pub(super) fn compose(
@@ -313,9 +313,11 @@ impl<'a> Builder<'a> {
         Node::Line { line, input: Box::new(joined) }
     }
 
-    fn finish(self, root: Node, design: Vec<DesignWeight>) -> ArrayPlan {
+    fn finish(mut self, root: Node, design: Vec<DesignWeight>) -> ArrayPlan {
+        blank_lone_groups(&mut self.lines);
         let roles = (0..self.legs.len()).map(|leg| Some(RoleId(leg))).collect();
-        let states = vec![State { bearing: self.spec.heading, roles }];
+        let steer = self.spec.broadside.as_ref().map_or_else(Angle::default, |row| row.steer);
+        let states = vec![State { bearing: self.spec.heading.turned(steer), roles }];
         let mut layout = self.layout;
         super::earth::measure_distances(&mut layout);
         ArrayPlan {
@@ -330,6 +332,16 @@ impl<'a> Builder<'a> {
                 switch: Switch { states },
             },
             design,
+        }
+    }
+}
+
+/// A line that has nobody to agree with is in no group.
+fn blank_lone_groups(lines: &mut [Line]) {
+    let groups: Vec<String> = lines.iter().map(|line| line.match_group.clone()).collect();
+    for line in lines {
+        if groups.iter().filter(|group| **group == line.match_group).count() == 1 {
+            line.match_group.clear();
         }
     }
 }

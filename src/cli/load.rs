@@ -108,6 +108,7 @@ fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Fai
     problems.extend(settled.problems);
     let wanted = wanted_options(&project, arguments.option.as_deref())?;
     let mut results = Vec::new();
+    checked.remarks = remarks(&settled.designs);
     for design in settled.designs.into_iter().filter(|design| wanted.contains(&design.option)) {
         let takeoff = takeoff::take_off(&project, &catalogue, &design);
         let (bill, noticed) = pricing::price(&project, &catalogue, &takeoff);
@@ -121,6 +122,17 @@ fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Fai
     }
     let hash = checked.hash.clone();
     Ok((checked, Some(Work { project, catalogue, results, problems, hash })))
+}
+
+/// What the search for the best delay and the noise budget found, an array a line or two.
+fn remarks(designs: &[design::Design]) -> Vec<String> {
+    let mut lines = Vec::new();
+    for array in designs.iter().flat_map(|design| &design.arrays) {
+        lines.extend(design::best_in_words(&array.plan.name, &array.delay));
+        lines.push(format!("{}: {}", array.plan.name, array.amplifier_reason));
+    }
+    lines.dedup();
+    lines
 }
 
 fn wanted_options(project: &Project, wanted: Option<&str>) -> Result<Vec<String>, Failure> {

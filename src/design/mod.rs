@@ -1,16 +1,25 @@
 //! A settled design: the composition with every choice made that depends on parts, land or radio.
 //!
-//! Best delays are found, the hub amplifier is decided, cables are chosen, and every line has its lengths. Everything
-//! after this module reads a [`Design`] and makes no choice of its own.
+//! Best delays are found, the hub amplifier is decided, cables are chosen, and every line has its lengths, tolerance and
+//! test frequency. Everything after this module reads a [`Design`] and makes no choice of its own.
 
+mod amplifier;
+mod bay;
+mod delay;
+mod direction;
+mod land;
 mod settle;
 
 use rust_decimal::Decimal;
 
+pub use delay::best_in_words;
 pub use settle::{Settled, code, settle};
 
 use crate::plan::{ArrayPlan, Cables, LineLength};
 use crate::project::ArraySpec;
+use crate::radio::{DelayCurve, Soil};
+use crate::reception::{Ends, NoiseSite, Subject, Trim, Weighting};
+use crate::units::Length;
 
 /// One option, settled.
 #[derive(Clone, Debug)]
@@ -32,10 +41,50 @@ pub struct ArrayDesign {
     pub plan: ArrayPlan,
     /// The lengths of `plan.feed.lines`, in the same order.
     pub lengths: Vec<LineLength>,
+    /// How exact each of them must be; nothing for lines that need not be.
+    pub tolerances: Vec<Option<Length>>,
+    /// The test frequencies of lines that must be exact.
+    pub trims: Vec<Option<Trim>>,
     /// The cables chosen.
     pub cables: Cables,
-    /// The delay line's electrical length over the row step, and how it was found.
-    pub ratio: Decimal,
+    /// The delay, and how it was found.
+    pub delay: DelayChoice,
     /// How the longest bay came about.
     pub bay_reason: String,
+    /// Why the hub has or has not an amplifier.
+    pub amplifier_reason: String,
+    /// The ground constants.
+    pub soil: Soil,
+    /// How the far ends of wires are built.
+    pub ends: Ends,
+    /// External noise and what the catalogue has against it.
+    pub noise: NoiseSite,
+}
+
+/// The delay line's electrical length over the row step, and how it was found.
+#[derive(Clone, Debug)]
+pub struct DelayChoice {
+    /// The ratio used.
+    pub ratio: Decimal,
+    /// What each ratio from 0.4 to 1.0 would give at the design frequency; nothing for arrays without such a delay.
+    pub curve: Option<DelayCurve>,
+}
+
+impl ArrayDesign {
+    /// This array as a subject of a pattern report.
+    pub fn subject(&self, weighting: Weighting) -> Subject<'_> {
+        let ends = match weighting {
+            Weighting::Ideal => Ends::Matched,
+            Weighting::Built => self.ends,
+        };
+        Subject {
+            plan: &self.plan,
+            lengths: &self.lengths,
+            cables: &self.cables,
+            soil: self.soil,
+            ends,
+            weighting,
+            noise: &self.noise,
+        }
+    }
 }

@@ -24,6 +24,18 @@ pub struct LineLength {
     pub steps: Vec<String>,
 }
 
+impl LineLength {
+    /// The electrical length of the finished line: a delay line's own, else finished length over velocity factor.
+    pub fn electrical(&self, line: &Line, velocity: VelocityFactor) -> ElectricalLength {
+        match line.role {
+            LineRole::Delay => line.delay,
+            LineRole::Branch | LineRole::Run | LineRole::Main => {
+                ElectricalLength::from_metres(self.finished.decimal_metres() / velocity.ratio())
+            }
+        }
+    }
+}
+
 /// What the lengths depend on besides the plan.
 #[derive(Clone, Debug)]
 pub struct Allowances<'a> {

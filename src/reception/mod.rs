@@ -12,6 +12,7 @@ pub use element::{Ends, elements, soil};
 pub use noise::{AmplifierFigures, Noise, NoiseSite};
 pub use report::{
     ArrayReport, DirectionReport, Figures, FrequencyReport, Subject, Weighting, delay_curve, report,
+    report_noise,
 };
 pub use tolerance::{Trim, TrimBasis, level_limit_db, tolerances, trim};
 pub use weight::{LineFigures, built, designed, line_figures, path_loss_db};

@@ -189,3 +189,19 @@ pub fn delay_curve(
     let response = Response::new(&element::elements(&plan.layout, ends), soil, frequency)?;
     Ok(radio::delay_curve(&response, weights_at))
 }
+
+/// The noise budgets alone, first direction, at the frequencies where one can be made.
+pub fn report_noise(subject: &Subject<'_>, frequencies: &[Frequency]) -> Vec<(Frequency, Noise)> {
+    let Some(state) = subject.plan.feed.switch.states.first() else { return Vec::new() };
+    let elements = seen_from(subject, state);
+    frequencies
+        .iter()
+        .filter_map(|frequency| {
+            let response = Response::new(&elements, subject.soil, *frequency).ok()?;
+            let weights = weights(subject, state, *frequency);
+            response.check_weights(&weights).ok()?;
+            let lines = line_figures(&subject.plan.feed, subject.lengths, subject.cables, *frequency);
+            Some((*frequency, noise::budget(subject, &response, &weights, &lines, *frequency)?))
+        })
+        .collect()
+}

@@ -98,7 +98,7 @@ fn item(item: &Item) -> Value {
 fn piece(piece: &Piece) -> Value {
     let electrical = piece.electrical.as_ref();
     let degrees = electrical.map(|e| rounded(e.length.degrees(e.frequency), 4));
-    let trim = electrical.and_then(|e| e.trim).map(crate::units::Frequency::mhz);
+    let trim = electrical.and_then(|e| e.trim).map(|trim| rounded(trim.open.mhz(), 6));
     json!({
         "label": piece.label,
         "role": piece.role.word(),

@@ -3,15 +3,13 @@
 use super::model::{Piece, PieceElectrical, PieceRole, Reason};
 use super::tally::{Tally, Want};
 use super::{ArrayDesign, Scene};
-use crate::plan::{CablePart, Connection, Line, LineId, LineLength, LineRole, chokes_on};
-use crate::units::ElectricalLength;
+use crate::plan::{CablePart, Connection, Line, LineId, LineRole, chokes_on};
 
 /// Every line of the feed tree is one piece with two plugs.
 pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>, index: usize, array: &ArrayDesign) {
-    for (n, (line, length)) in array.plan.feed.lines.iter().zip(&array.lengths).enumerate() {
+    for (n, line) in array.plan.feed.lines.iter().enumerate() {
         let cable = array.cables.of(line.role);
-        let mut piece = piece(scene, array, line, length, cable);
-        piece.line = Some((index, LineId(n)));
+        let piece = piece(scene, array, index, LineId(n));
         add_plugs(tally, array, line, cable);
         add_chokes(tally, array, line);
         if line.connection == Connection::InLine {
@@ -31,13 +29,8 @@ pub(super) const fn piece_role(role: LineRole) -> PieceRole {
     }
 }
 
-fn piece(
-    scene: &Scene<'_>,
-    array: &ArrayDesign,
-    line: &Line,
-    length: &LineLength,
-    cable: &CablePart,
-) -> Piece {
+fn piece(scene: &Scene<'_>, array: &ArrayDesign, index: usize, id: LineId) -> Piece {
+    let (line, length) = (array.plan.feed.line(id), &array.lengths[id.0]);
     let layout = &array.plan.layout;
     let laid = line.role != LineRole::Delay;
     let grouped = laid && !line.match_group.is_empty();
@@ -45,7 +38,7 @@ fn piece(
     Piece {
         label: line.label.clone(),
         role: piece_role(line.role),
-        part: cable.part.clone(),
+        part: array.cables.of(line.role).part.clone(),
         from: name(line.termini.from),
         to: name(line.termini.to),
         straight: laid.then_some(length.straight),
@@ -55,27 +48,22 @@ fn piece(
         coiled: grouped.then_some(length.coiled),
         match_group: line.match_group.clone(),
         conductors: None,
-        electrical: Some(electrical(scene, line, length, cable)),
+        electrical: Some(electrical(scene, array, id)),
         serves: line.serves.clone(),
-        line: None,
+        line: Some((index, id)),
         reason: Reason::steps(length.steps.clone()),
     }
 }
 
-fn electrical(scene: &Scene<'_>, line: &Line, length: &LineLength, cable: &CablePart) -> PieceElectrical {
-    let vf = cable.velocity;
-    let electrical = match line.role {
-        LineRole::Delay => line.delay,
-        LineRole::Branch | LineRole::Run | LineRole::Main => {
-            ElectricalLength::from_metres(length.finished.decimal_metres() / vf.ratio())
-        }
-    };
+fn electrical(scene: &Scene<'_>, array: &ArrayDesign, id: LineId) -> PieceElectrical {
+    let line = array.plan.feed.line(id);
+    let cable = array.cables.of(line.role);
     PieceElectrical {
-        length: electrical,
-        velocity_factor: vf,
+        length: array.lengths[id.0].electrical(line, cable.velocity),
+        velocity_factor: cable.velocity,
         frequency: scene.project.frequency,
-        trim: None,
-        tolerance: None,
+        trim: array.trims[id.0],
+        tolerance: array.tolerances[id.0],
     }
 }
 

@@ -7,6 +7,7 @@ use rust_decimal::Decimal;
 
 use crate::catalogue::PartChoice;
 use crate::plan::LineId;
+use crate::reception::Trim;
 use crate::units::{ElectricalLength, Frequency, Length, VelocityFactor};
 
 /// Everything that one option needs, net, with waste and spares beside it.
@@ -188,8 +189,8 @@ pub struct PieceElectrical {
     pub velocity_factor: VelocityFactor,
     /// The design frequency.
     pub frequency: Frequency,
-    /// First resistance dip with the far end open, with the velocity factor there if the catalogue has points.
-    pub trim: Option<Frequency>,
+    /// The frequencies at which the finished piece proves right.
+    pub trim: Option<Trim>,
     /// The largest length error that keeps the wanted rear rejection, physical.
     pub tolerance: Option<Length>,
 }

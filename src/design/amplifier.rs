@@ -1,0 +1,78 @@
+//! Does the hub need an amplifier?
+
+use rust_decimal::prelude::ToPrimitive;
+
+use super::ArrayDesign;
+use crate::arrays::HubAmplifier;
+use crate::catalogue::{Catalogue, Part};
+use crate::project::{AmplifierChoice, Project};
+use crate::reception::{self, AmplifierFigures, NoiseSite, Weighting};
+use crate::units::Decibel;
+
+/// Above this the floor rises audibly and `"auto"` fits an amplifier (house rule).
+const FITTED_ABOVE_DB: f64 = 3.0;
+/// Below this an amplifier buys nothing (house rule).
+const NEEDLESS_BELOW_DB: f64 = 1.0;
+
+/// External noise, the receiver, and what the catalogue has against it.
+pub(super) fn noise_site(project: &Project, catalogue: &Catalogue) -> NoiseSite {
+    let amplifier = |element: &str| {
+        let part =
+            catalogue.default_part_with("amplifier", |part| part.attribute("element") == Some(element))?;
+        Some(AmplifierFigures { noise_figure: decibels(part, "nf_db")?, gain: decibels(part, "gain_db")? })
+    };
+    let coil = catalogue.default_part("loading-coil");
+    NoiseSite {
+        class: project.site.noise,
+        receiver: project.receiver_noise,
+        hub_amplifier: amplifier("hub"),
+        element_amplifier: amplifier("vertical"),
+        passive_gain: coil.and_then(|part| decibels(part, "gain_db")),
+    }
+}
+
+fn decibels(part: &Part, key: &str) -> Option<Decibel> {
+    part.number(key).and_then(|db| db.to_f64()).map(Decibel::new)
+}
+
+/// Decides for an array that was settled without an amplifier, and says why.
+pub(super) fn decide(project: &Project, design: &ArrayDesign) -> (HubAmplifier, String) {
+    let has_hub = design.plan.feed.hubs.iter().any(|hub| hub.outputs > 0);
+    match design.spec.feed.amplifier {
+        AmplifierChoice::None => (HubAmplifier::Absent, "no hub amplifier, as given".to_owned()),
+        AmplifierChoice::Hub | AmplifierChoice::Auto if !has_hub => {
+            (HubAmplifier::Absent, "no hub in the field, so no hub amplifier".to_owned())
+        }
+        AmplifierChoice::Hub => (HubAmplifier::Fitted, "hub amplifier as given".to_owned()),
+        AmplifierChoice::Auto => automatic(project, design),
+    }
+}
+
+/// The worst band decides.
+fn automatic(project: &Project, design: &ArrayDesign) -> (HubAmplifier, String) {
+    let report = reception::report_noise(&design.subject(Weighting::Built), &project.frequencies());
+    let worst = report.into_iter().max_by(|a, b| a.1.degradation.db().total_cmp(&b.1.degradation.db()));
+    let Some((frequency, noise)) = worst else {
+        let why = "the noise budget cannot be made for this array, so no hub amplifier is fitted";
+        return (HubAmplifier::Absent, why.to_owned());
+    };
+    let without = noise.degradation.db();
+    let budget = format!(
+        "at {frequency} external noise {:.1} dB, average gain {:.1} dB: the receiver raises the floor by {without:.2} dB",
+        noise.external.db(),
+        noise.average_gain.db()
+    );
+    match noise.with_amplifier {
+        Some(with) if without > FITTED_ABOVE_DB => {
+            (HubAmplifier::Fitted, format!("{budget}, with a hub amplifier by {:.2} dB: fitted", with.db()))
+        }
+        None if without > FITTED_ABOVE_DB => (
+            HubAmplifier::Absent,
+            format!("{budget}; the catalogue has no hub amplifier with nf_db and gain_db"),
+        ),
+        Some(_) | None if without > NEEDLESS_BELOW_DB => {
+            (HubAmplifier::Absent, format!("{budget}: an amplifier is optional, none is fitted"))
+        }
+        Some(_) | None => (HubAmplifier::Absent, format!("{budget}: none is needed")),
+    }
+}

@@ -1,0 +1,74 @@
+//! The delay of an end-fire stage: given, or found.
+
+use rust_decimal::Decimal;
+use rust_decimal::prelude::{FromPrimitive, ToPrimitive};
+
+use super::DelayChoice;
+use crate::arrays::{self, Context, Names};
+use crate::project::{ArraySpec, DelayRatio, EndfireStage, Phasing, Project};
+use crate::radio::DelayCurve;
+use crate::reception::{self, Ends};
+
+/// The delay that an array's end-fire stage asks for; nothing where the weights are given or there is no such stage.
+fn asked(spec: &ArraySpec) -> Option<DelayRatio> {
+    let phasing = match spec.endfire.as_ref()? {
+        EndfireStage::Echelon(stage) => &stage.phasing,
+        EndfireStage::Endfire(stage) => &stage.phasing,
+        EndfireStage::Custom(_) => return None,
+    };
+    match phasing {
+        Phasing::Scheme { delay, .. } => Some(*delay),
+        Phasing::Weights(_) => None,
+    }
+}
+
+/// Finds the ratio, searching 0.4 to 1.0 at the design frequency with matched terminations and nothing lost.
+pub(super) fn choose(project: &Project, spec: &ArraySpec, context: &Context) -> DelayChoice {
+    let Some(asked) = asked(spec) else { return DelayChoice { ratio: Decimal::ONE, curve: None } };
+    let curve = curve(project, spec, context);
+    let found = |pick: fn(&DelayCurve) -> f64| {
+        let ratio = curve.as_ref().map(pick).and_then(Decimal::from_f64);
+        ratio.map_or(Decimal::ONE, |ratio| ratio.round_dp(2).normalize())
+    };
+    let ratio = match asked {
+        DelayRatio::Ratio(ratio) => ratio,
+        DelayRatio::BestRear => found(|curve| curve.best_rear.ratio),
+        DelayRatio::BestRdf => found(|curve| curve.best_rdf.ratio),
+    };
+    DelayChoice { ratio, curve }
+}
+
+fn curve(project: &Project, spec: &ArraySpec, context: &Context) -> Option<DelayCurve> {
+    let plan_at = |ratio: f64| {
+        let ratio = Decimal::from_f64(ratio).unwrap_or(Decimal::ONE).round_dp(4);
+        arrays::expand(spec, ratio, context, &mut Names::default())
+    };
+    let soil = reception::soil(project.site.ground);
+    let frequency = project.frequency;
+    let weights_at = |ratio| reception::designed(&plan_at(ratio), frequency);
+    reception::delay_curve(&plan_at(1.0), soil, Ends::Matched, frequency, weights_at).ok()
+}
+
+/// What "best-rear" and "best-rdf" would give beside the ratio used; nothing without a curve.
+pub fn best_in_words(array: &str, choice: &DelayChoice) -> Option<String> {
+    let curve = choice.curve.as_ref()?;
+    let ratio = choice.ratio.to_f64()?;
+    let here =
+        curve.points.iter().min_by(|a, b| (a.ratio - ratio).abs().total_cmp(&(b.ratio - ratio).abs()))?;
+    let (rear, rdf) = (&curve.best_rear, &curve.best_rdf);
+    Some(format!(
+        "{array}: delay {} gives RDF {:.1} dB, worst rear lobe {:.1} dB; \"best-rear\" would be {:.2} (RDF {:.1} dB, rear {:.1} dB, \
+         as good within {:.2} to {:.2}), \"best-rdf\" {:.2} (RDF {:.1} dB, rear {:.1} dB)",
+        choice.ratio.normalize(),
+        here.rdf_db,
+        here.worst_rear_db,
+        rear.ratio,
+        rear.rdf_db,
+        rear.worst_rear_db,
+        curve.rear_plateau.from_ratio,
+        curve.rear_plateau.to_ratio,
+        rdf.ratio,
+        rdf.rdf_db,
+        rdf.worst_rear_db
+    ))
+}
