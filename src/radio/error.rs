@@ -16,6 +16,8 @@ pub enum RadioError {
     },
     /// All weights are zero, or one is not a number.
     UnusableWeights,
+    /// The dimensions are so far from any antenna that the formulas have no finite value.
+    NotFinite,
     /// A length, height, diameter, spacing, resistance, frequency or soil constant is not positive, or a position not
     /// finite.
     NotPositive {
@@ -33,6 +35,7 @@ impl fmt::Display for RadioError {
             Self::WeightCount { elements, weights } => {
                 write!(out, "the array has {elements} elements but {weights} weights")
             }
+            Self::NotFinite => write!(out, "the dimensions are outside what the formulas can compute"),
             Self::UnusableWeights => write!(out, "all weights are zero, or one is not a number"),
             Self::NotPositive { element: Some(index), what } => {
                 write!(out, "the {what} of element {} is not usable", index + 1)

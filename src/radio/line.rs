@@ -53,7 +53,7 @@ impl LineTerms {
         self.geometry + self.earth_potential
     }
 
-    /// γ = jk √((L + P + z_i)/(L + Q)), Z₀ = (η/2π) √((L + P + z_i)(L + Q)).
+    /// γ = jk √((L + P + z)/(L + Q)), Z₀ = (η/2π) √((L + P + z)(L + Q)), z the conductor's term.
     pub fn constants(self, frequency: Frequency) -> LineConstants {
         mode(frequency, self.series(), self.shunt())
     }

@@ -114,7 +114,7 @@ impl HeightFactors {
         }
     }
 
-    /// (E_θ, E_φ) of a wire along x.
+    /// `(E_θ, E_φ)` of a wire along x.
     pub(super) fn field(&self, cos_phi: f64, sin_phi: f64, along: Along) -> (Complex64, Complex64) {
         (cos_phi * self.over * along.wire + self.leads * along.leads, sin_phi * self.across * along.wire)
     }

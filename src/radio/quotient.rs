@@ -14,7 +14,7 @@ use crate::units::Frequency;
 /// Eigenvalues below this part of the largest are rounding, not directions to listen in.
 const RANK_LIMIT: f64 = 1e-13;
 
-/// The Hermitian matrix B with B_ij = (1/4π) ∫ E_i·E_j* dΩ over the upper half of the sky.
+/// The Hermitian matrix B with `B_ij = (1/4π) ∫ E_i·E_j* dΩ` over the upper half of the sky.
 ///
 /// Noise is taken as unpolarised, equal from everywhere above the horizon, and none from below.
 #[derive(Clone, Debug, PartialEq)]
@@ -32,7 +32,7 @@ impl Correlation {
     pub fn new(elements: &[RadioElement], soil: Soil, frequency: Frequency) -> Result<Self, RadioError> {
         check(elements, soil, frequency)?;
         let scanner = Scanner::new(elements, soil, frequency);
-        Ok(Self::of(&scanner, extent_wavelengths(elements, frequency)))
+        Self::of(&scanner, extent_wavelengths(elements, frequency)).finite()
     }
 
     /// The same by a given rule in two dimensions, for comparison.
@@ -46,12 +46,19 @@ impl Correlation {
         rule: SphereRule,
     ) -> Result<Self, RadioError> {
         check(elements, soil, frequency)?;
-        Ok(over_sphere(&Scanner::new(elements, soil, frequency), rule))
+        over_sphere(&Scanner::new(elements, soil, frequency), rule).finite()
     }
 
     pub(super) fn of(scanner: &Scanner, extent: f64) -> Self {
         let rule = SphereRule::for_extent(extent);
         if scanner.all_vertical() { of_verticals(scanner, rule) } else { over_sphere(scanner, rule) }
+    }
+
+    /// The matrix itself when every entry is finite.
+    pub(super) fn finite(self) -> Result<Self, RadioError> {
+        let finite = self.diagonal.iter().all(|own| own.is_finite() && *own > 0.0)
+            && self.upper.iter().all(|entry| entry.is_finite());
+        if finite { Ok(self) } else { Err(RadioError::NotFinite) }
     }
 
     /// How many elements there are.
@@ -64,7 +71,7 @@ impl Correlation {
         self.diagonal.is_empty()
     }
 
-    /// B_ij.
+    /// The entry `B_ij`.
     ///
     /// # Panics
     /// When a place is beyond the number of elements.
@@ -96,7 +103,7 @@ impl Correlation {
         own + 2.0 * mutual
     }
 
-    /// Σ |w_i|² B_ii: the average if the elements had nothing in common.
+    /// `Σ |w_i|² B_ii`: the average if the elements had nothing in common.
     pub(super) fn independent(&self, weights: &[Complex64]) -> f64 {
         weights.iter().zip(&self.diagonal).map(|(weight, own)| weight.norm_sqr() * own).sum()
     }
@@ -106,7 +113,7 @@ impl Correlation {
     }
 }
 
-/// Verticals: the azimuth integral is a Bessel function, B_ij = ½ ∫ E_i E_j* J₀(kρ √(1 − u²)) du.
+/// Verticals: the azimuth integral is a Bessel function, `B_ij = ½ ∫ E_i E_j* J₀(kρ √(1 − u²)) du`.
 ///
 /// Eight points more than the rule asks for, since compact arrays subtract nearly equal entries.
 fn of_verticals(scanner: &Scanner, rule: SphereRule) -> Correlation {
@@ -158,7 +165,7 @@ fn over_sphere(scanner: &Scanner, rule: SphereRule) -> Correlation {
     correlation
 }
 
-/// Σ w_i v_i.
+/// The sum of fields times weights.
 pub(super) fn combine(fields: &[Complex64], weights: &[Complex64]) -> Complex64 {
     let mut sum = Complex64::ZERO;
     for (field, weight) in fields.iter().zip(weights) {
@@ -210,7 +217,8 @@ impl Quotient {
         scanner.scan(&[(90.0 - elevation_deg).to_radians()], &[0.0], |_, _, fields, _| {
             towards = fields.iter().map(|field| field.theta).collect();
         });
-        Ok(Self::new(Correlation::of(&scanner, extent_wavelengths(elements, frequency)), towards))
+        let correlation = Correlation::of(&scanner, extent_wavelengths(elements, frequency)).finite()?;
+        Ok(Self::new(correlation, towards))
     }
 
     /// RDF in dB: 10 lg(|wᵀv|² / wᵀBw*).

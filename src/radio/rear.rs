@@ -162,12 +162,9 @@ impl RearGrid {
         let mut step = self.row_step.max(self.column_step).div_ceil(2);
         loop {
             let mut moved = false;
-            for (r, c) in [
-                (row.saturating_sub(step), column),
-                ((row + step).min(GRID_ROWS - 1), column),
-                (row, column.saturating_sub(step)),
-                (row, (column + step).min(REAR_COLUMNS - 1)),
-            ] {
+            let rows = [row.saturating_sub(step), row, (row + step).min(GRID_ROWS - 1)];
+            let columns = [column.saturating_sub(step), column, (column + step).min(REAR_COLUMNS - 1)];
+            for (r, c) in rows.into_iter().flat_map(|r| columns.map(|c| (r, c))) {
                 let power = self.power(weights, r, c);
                 if power > best {
                     (best, row, column, moved) = (power, r, c, true);

@@ -34,7 +34,7 @@ impl Field {
         Self { theta: self.theta * factor, phi: self.phi * factor }
     }
 
-    /// |E_θ|² + |E_φ|².
+    /// `|E_θ|² + |E_φ|²`.
     pub fn power(self) -> f64 {
         self.theta.norm_sqr() + self.phi.norm_sqr()
     }
@@ -60,14 +60,15 @@ impl Response {
     /// Prepares an array.
     ///
     /// # Errors
-    /// When there is no element, or a dimension, the frequency or a soil constant is not positive and finite.
+    /// When there is no element, a dimension, the frequency or a soil constant is not positive and finite, or a conductor is
+    /// thicker than it is high.
     pub fn new(elements: &[RadioElement], soil: Soil, frequency: Frequency) -> Result<Self, RadioError> {
         check(elements, soil, frequency)?;
         let scanner = Scanner::new(elements, soil, frequency);
         let forward = forward_column(&scanner);
         let alone = forward_column(&Scanner::new(&elements[..1], soil, frequency));
         let one_element_peak = alone.iter().map(Complex64::norm_sqr).fold(0.0, f64::max);
-        let correlation = Correlation::of(&scanner, extent_wavelengths(elements, frequency));
+        let correlation = Correlation::of(&scanner, extent_wavelengths(elements, frequency)).finite()?;
         let elements = elements.to_vec();
         Ok(Self { scanner, elements, soil, correlation, forward, one_element_peak, rear: OnceLock::new() })
     }
@@ -163,11 +164,11 @@ pub(super) fn total(fields: &[Field], weights: &[Complex64]) -> Field {
     })
 }
 
-/// Fields towards azimuth 0 for every degree from the zenith down; parallel wires have no E_φ there.
+/// Fields towards azimuth 0 for every degree from the zenith down; parallel wires have no horizontal field there.
 fn forward_column(scanner: &Scanner) -> Vec<Complex64> {
     let mut column = Vec::with_capacity(GRID_ROWS * scanner.elements());
     scanner.scan(&grid_thetas(), &[0.0], |_, _, fields, _| {
-        column.extend(fields.iter().map(|field| field.theta))
+        column.extend(fields.iter().map(|field| field.theta));
     });
     column
 }
@@ -227,6 +228,7 @@ pub(super) fn check(elements: &[RadioElement], soil: Soil, frequency: Frequency)
                 own("length", length.metres())?;
                 own("height", height.metres())?;
                 own("diameter", diameter.metres())?;
+                own("height over the diameter", height.metres() - diameter.metres())?;
                 match termination {
                     Termination::Matched => {}
                     Termination::Reflection(value) => own("reflection", 1.0 - value.abs())?,
@@ -238,6 +240,7 @@ pub(super) fn check(elements: &[RadioElement], soil: Soil, frequency: Frequency)
                 own("height", height.metres())?;
                 own("diameter", diameter.metres())?;
                 own("spacing", spacing.metres())?;
+                own("height over the spacing", height.metres() - spacing.metres().max(diameter.metres()))?;
             }
         }
     }

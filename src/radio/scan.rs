@@ -11,12 +11,12 @@ use super::response::Field;
 use super::vertical::Vertical;
 use crate::units::Frequency;
 
-/// A pattern that elements share; a pair has two ports, the others one.
+/// A pattern that elements share; a pair has two feeds, the others one.
 #[derive(Clone, Debug)]
 enum Shape {
     Vertical(Vertical),
     Lone { height: f64, wire: LoneWire },
-    Pair { height: f64, pair: CoupledPair },
+    Pair { height: f64, pair: Box<CoupledPair> },
 }
 
 /// What a shape is made of, to find equal ones.
@@ -27,11 +27,11 @@ enum Key {
     Pair(WireSpec, WireSpec, f64, f64),
 }
 
-/// An element: its shape, which port of it, and the place whose phase it carries.
+/// An element: its shape, which feed of it, and the place whose phase it carries.
 #[derive(Clone, Copy, Debug)]
 struct Port {
     shape: usize,
-    port: usize,
+    feed: usize,
     x: usize,
     y: usize,
 }
@@ -86,7 +86,7 @@ impl Scanner {
             grouping: group(elements),
             shapes: Vec::new(),
             keys: Vec::new(),
-            ports: vec![Port { shape: 0, port: 0, x: 0, y: 0 }; elements.len()],
+            ports: vec![Port { shape: 0, feed: 0, x: 0, y: 0 }; elements.len()],
             xs: Vec::new(),
             ys: Vec::new(),
         };
@@ -109,7 +109,7 @@ impl Scanner {
                 let key = Key::Pair(a, b, stagger, offset);
                 self.known(&key).or_else(|| {
                     let pair = CoupledPair::new(self.frequency, self.n2, (&a, &b), stagger, offset)?;
-                    Some(self.add((Shape::Pair { height: a.height, pair }, key)))
+                    Some(self.add((Shape::Pair { height: a.height, pair: Box::new(pair) }, key)))
                 })
             }
             (None, _) | (_, None) => None,
@@ -120,8 +120,8 @@ impl Scanner {
             return;
         };
         let (x, y) = (place(&mut self.xs, from.x()), place(&mut self.ys, from.y()));
-        self.ports[rear] = Port { shape, port: 0, x, y };
-        self.ports[front] = Port { shape, port: 1, x, y };
+        self.ports[rear] = Port { shape, feed: 0, x, y };
+        self.ports[front] = Port { shape, feed: 1, x, y };
     }
 
     fn add_lone(&mut self, elements: &[RadioElement], index: usize) {
@@ -129,7 +129,7 @@ impl Scanner {
         let (key, shape) = lone_shape(self.frequency, self.n2, &element.kind);
         let shape = self.known(&key).unwrap_or_else(|| self.add((shape, key)));
         let (x, y) = (place(&mut self.xs, element.position.x()), place(&mut self.ys, element.position.y()));
-        self.ports[index] = Port { shape, port: 0, x, y };
+        self.ports[index] = Port { shape, feed: 0, x, y };
     }
 
     fn known(&self, key: &Key) -> Option<usize> {
@@ -152,7 +152,7 @@ impl Scanner {
         self.shapes.iter().all(|shape| matches!(shape, Shape::Vertical(_)))
     }
 
-    /// E_θ of every element without its place, towards `sin`, `cos` of the zenith angle; for verticals.
+    /// The vertical field of every element without its place, towards `sin`, `cos` of the zenith angle; for verticals.
     pub(super) fn vertical_fields(&self, theta: f64) -> Vec<Complex64> {
         let (sin, cos) = theta.sin_cos();
         let ground = reflection(self.n2, theta);
@@ -195,7 +195,7 @@ impl Scanner {
                     *slot = shape.fields(ks, sin_phi, cos_phi);
                 }
                 for (index, port) in self.ports.iter().enumerate() {
-                    let own = &fields[port.shape][port.port];
+                    let own = &fields[port.shape][port.feed];
                     let (forward, sideways) = (along_x[port.x], along_y[port.y]);
                     left[index] = own.left.times(forward * sideways);
                     right[index] = own.right.times(forward * sideways.conj());
@@ -241,7 +241,7 @@ fn turn_all(turns: &mut [Complex64], distances: &[f64], factor: f64) {
 }
 
 impl ShapeRow<'_> {
-    /// The fields of both ports at φ and −φ; the second port stays zero where there is one only.
+    /// The fields of both feeds at φ and −φ; the second stays zero where there is one only.
     fn fields(&self, ks: f64, sin_phi: f64, cos_phi: f64) -> [Mirrored; 2] {
         match self {
             Self::Vertical(field) => {

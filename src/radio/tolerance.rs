@@ -60,7 +60,7 @@ pub struct RandomErrors {
 
 /// The closed form for independent errors on every element.
 ///
-/// σ² = (0.115129 s_A)² + (0.0174533 s_P)²; floor = 20 lg σ − G with G the signal over one element at the take-off elevation;
+/// σ² = (0.115129 a)² + (0.0174533 p)² with a in dB and p in degrees; floor = 20 lg σ − G with G the signal over one element at the take-off elevation;
 /// loss = 10 lg((1 + t A₁/A)/(1 + t P₁/P₀)), t = σ² Σ|w|². The floor holds in a direction in which one element is as strong as
 /// towards the forward maximum; elsewhere subtract the element's own pattern.
 /// Within 0.7 dB of drawn errors up to 1 dB and 10°. Principle: Ruze, "The effect of aperture errors on the antenna
@@ -96,7 +96,7 @@ pub struct SingleErrorLimit {
 /// How wrong one element's phase or level may be while its residual in a rear null stays `reject_db` below the forward
 /// maximum.
 ///
-/// The closed form of [`pair_null_floor_db`] for any array: |w_i E_i| |1 − g| over |y + (g − 1) w_i E_i|, all towards the
+/// The closed form of [`pair_null_floor_db`] for any array: |e| |1 − g| over |y + (g − 1) e| with e its own part of the output y, all towards the
 /// unperturbed forward maximum. It takes the element to be as strong to the rear as forward, which is right for
 /// verticals and on the safe side for wires. An element without weight has no limit and gets the widest one.
 pub fn single_error_limit(

@@ -12,9 +12,9 @@ use crate::units::{Frequency, Length};
 /// Conductivity of copper in S/m.
 const COPPER: f64 = 5.8e7;
 
-/// The factor e^{−γ_b L} that the signal of an element takes on its way back along the pair; 1 for every other element.
+/// The factor `e^{−γL}` that the signal of an element takes on its way back along the pair; 1 for every other element.
 ///
-/// γ_b = R/(2 Z_b) + jk/VF, R the skin-effect resistance of both copper wires. Own derivation, not compared with a
+/// γ = R/(2Z) + jk/VF, Z the pair's impedance, R the skin-effect resistance of both copper wires. Own derivation, not compared with a
 /// reference. The factor is the same for every element of a direction, so it changes the signal, not the pattern.
 pub fn balanced_return(frequency: Frequency, kind: &ElementKind) -> Complex64 {
     match kind {

@@ -44,9 +44,9 @@ impl Vertical {
     }
 }
 
-/// The field E_θ in metres (unit base current) of a base-fed vertical at `theta` radians from the zenith.
+/// The field in metres (unit base current) of a base-fed vertical at `theta` radians from the zenith.
 ///
-/// E_θ = −sin θ ∫ I(z) [e^{jkz cos θ} + R_v e^{−jkz cos θ}] dz with I(z) = sin k(H−z)/sin kH. Mutual coupling is left out:
+/// `E = −sin θ ∫ I(z) [e^{jkz cos θ} + R_v e^{−jkz cos θ}] dz` with I(z) = sin k(H−z)/sin kH. Mutual coupling is left out:
 /// exact for voltage probes. Heights up to λ/8. Source: the image principle with Fresnel's coefficients, as
 /// [`reflection`].
 pub fn vertical_field(

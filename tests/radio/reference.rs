@@ -131,12 +131,12 @@ fn figures(check: &Check) -> BTreeMap<&'static str, f64> {
     }
 }
 
-/// |R_v| at an elevation in degrees.
+/// The size of the vertical reflection at an elevation in degrees.
 fn rv(n2: Complex64, elevation_deg: f64) -> f64 {
     reflection(Some(n2), (90.0 - elevation_deg).to_radians()).vertical.norm()
 }
 
-/// The elevation of the least |R_v| by golden-section search between 0.01 and 60°.
+/// The elevation of its minimum by golden-section search between 0.01 and 60°.
 fn pseudo_brewster_deg(n2: Complex64) -> f64 {
     let golden = f64::midpoint(5_f64.sqrt(), -1.0);
     let (mut low, mut high) = (0.01, 60.0);

@@ -111,10 +111,12 @@ fn layouts() -> Vec<Layout> {
     ]
 }
 
+type Drawn = (&'static str, f64, f64, f64, f64, f64, f64, f64, f64);
+
 /// The table was drawn on a grid of 2°, so its forward maxima stand up to a degree aside: 0.08 dB of floor, 0.03 of rear.
 ///
 /// Layout, dB, degrees, floor, RDF loss by formula and drawn, worst rear without errors, drawn median and 90 %.
-const DRAWN: [(&str, f64, f64, f64, f64, f64, f64, f64, f64); 11] = [
+const DRAWN: [Drawn; 11] = [
     ("pair 9.15", 0.5, 2.0, -20.08, 0.094, 0.079, -8.74, -8.16, -7.31),
     ("pair 9.15", 1.0, 5.0, -13.44, 0.402, 0.346, -8.74, -6.95, -4.53),
     ("pair 15.5", 0.5, 2.0, -21.76, 0.051, 0.052, -5.93, -5.83, -5.35),

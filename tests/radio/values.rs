@@ -149,8 +149,10 @@ fn matrix_of_wires() {
     near(ratio, 0.074_02, 0.0, 6e-6);
 }
 
-/// Layout, elements, and (RDF, gain_rel) for a loading of 0, 0.001 and 0.01.
-fn rayleigh() -> [(&'static str, Vec<RadioElement>, [(f64, f64); 3]); 6] {
+type Bounded = (&'static str, Vec<RadioElement>, [(f64, f64); 3]);
+
+/// Layout, its elements, and (RDF, signal) for a loading of 0, 0.001 and 0.01.
+fn rayleigh() -> [Bounded; 6] {
     let line = |xs: &[f64], y: f64| xs.iter().map(|x| vertical(*x, y, 6.0)).collect::<Vec<_>>();
     let twice = |xs: &[f64]| [line(xs, -60.96), line(xs, 60.96)].concat();
     let corner = 24.0 / 2_f64.sqrt();
