@@ -32,7 +32,7 @@ pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>) {
     let why = format!(
         "{ENTRY_BOND} from the entry to the building's electrodes: measure on site; local code and a licensed person decide"
     );
-    let wire = tally.choose("radial-wire", &Want::any().with("bond", "station"));
+    let wire = tally.choose("radial-wire", &Want::any().with("kind", "station-bond"));
     tally.push(plain_piece(
         "RX-E".to_owned(),
         PieceRole::BondWire,
