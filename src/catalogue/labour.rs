@@ -54,6 +54,9 @@ const RATIO: NumberRule<'static> = NumberRule { units: &[], grouping: Grouping::
 pub(super) fn task(row: &mut RowReader<'_>) -> Option<Task> {
     let id = row.id("task", Case::AsWritten)?;
     let what = row.text("what");
+    if what.is_empty() {
+        row.needed_word("what");
+    }
     let unit = row.needed_word("unit");
     let hours = ["low_h", "likely_h", "high_h"].map(|name| row.needed_number(name, HOURS, Least::Zero));
     if let [Some(low), Some(likely), Some(high)] = hours

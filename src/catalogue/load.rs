@@ -124,7 +124,9 @@ fn references(given: &Catalogue, known: &BTreeSet<String>, report: &mut Report) 
 /// Price breaks of one part, pack and supplier: more packs must not cost more each, and the rows ascend.
 fn breaks(given: &Catalogue, report: &mut Report) {
     let mut lists = BTreeMap::<_, Vec<&Offer>>::new();
-    for offer in given.offers.values().filter(|offer| offer.available.is_none()) {
+    // A limited number is a special offer beside the list; a pack of nothing has been reported.
+    let listed = |offer: &&Offer| offer.available.is_none() && !offer.pack.is_zero();
+    for offer in given.offers.values().filter(listed) {
         let key = (&offer.part, offer.pack, &offer.supplier, &offer.currency);
         lists.entry(key).or_default().push(offer);
     }
@@ -139,7 +141,7 @@ fn breaks(given: &Catalogue, report: &mut Report) {
 fn break_pair(first: &Offer, second: &Offer, report: &mut Report) {
     if second.min_packs <= first.min_packs {
         let message = format!(
-            "the price break \"{}\" from {} packs stands after \"{}\" from {} packs",
+            "the price break \"{}\" (min_packs {}) stands after \"{}\" (min_packs {})",
             second.id, second.min_packs, first.id, first.min_packs
         );
         let help = "sort the rows of a part by min_packs, each once (or give them different suppliers)";

@@ -102,7 +102,7 @@ fn pack(row: &mut RowReader<'_>, unit: Option<(Unit, Counted)>) -> Decimal {
         None => &[],
     };
     let rule = NumberRule { units, grouping: Grouping::Possible };
-    let pack = row.needed_number("pack", rule, Least::AboveZero).unwrap_or(Decimal::ONE);
+    let pack = row.needed_number("pack", rule, Least::AboveZero).unwrap_or_default();
     match unit {
         Some((_, Counted::InFeet)) => metres(pack),
         _ => pack,

@@ -84,7 +84,7 @@ pub(super) fn read(row: &mut RowReader<'_>, source: Source) -> Option<(Part, Cou
     let (unit, counted) = unit(row);
     let mut weight_kg = row.number("weight_kg", WEIGHT, Least::Zero);
     if counted == Counted::InFeet {
-        weight_kg = weight_kg.map(|weight| weight / METRES_PER_FOOT);
+        weight_kg = weight_kg.and_then(|weight| weight.checked_div(METRES_PER_FOOT));
     }
     let tax_class = Some(row.word("tax_class")).filter(|class| !class.is_empty());
     let part = Part {

@@ -48,7 +48,9 @@ pub(super) fn draft(files: &[CatalogueFile], source: Source, base: &Catalogue) -
         Draft { catalogue: Catalogue::default(), report: Report::default(), prerequisites: Vec::new() };
     let known = |part: &super::Part| (part.id.clone(), (part.unit, Counted::InItsUnit));
     let mut units: Units = base.parts.values().map(known).collect();
-    files.iter().for_each(|file| known_file(file, &mut draft.report));
+    for file in files {
+        known_file(file, &mut draft.report);
+    }
     each(files, &part::SCHEMA, &mut draft, |table, draft| parts(table, source, &mut units, draft));
     each(files, &offer::SCHEMA, &mut draft, |table, draft| offers(table, source, &units, draft));
     each(files, &cable::SCHEMA, &mut draft, cables);

@@ -122,7 +122,7 @@ proptest! {
 
     /// Text near to a catalogue: legal headers with hostile cells.
     #[test]
-    fn no_cells_break_the_reader(cells in proptest::collection::vec("[0-9a-zEé€$%=+,.;:'\" /-]{0,8}", 9)) {
+    fn no_cells_break_the_reader(cells in proptest::collection::vec("([0-9]{0,30}|[0-9a-zEé€$%=+,.;:'\" /-]{0,8})", 9)) {
         let offers = format!("part,offer,pack,price,currency,priced_on,min_packs,available,lead_days\n{}\n", cells.join(","));
         let cables = format!("part,z0_ohm,velocity_factor,loss_db_per_100m\nplug-f-6,{}\n", cells[..3].join(","));
         let _ = over_built_in(&[("offers.csv", &offers), ("cables.csv", &cables)]);
