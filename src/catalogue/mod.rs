@@ -1,6 +1,6 @@
 //! CSV files that people edit in a spreadsheet, to a checked catalogue.
 //!
-//! [`load`] reads a user's files over [`built_in`]; [`age`] judges the days of the prices, [`health`] what looks
+//! [`load()`] reads a user's files over [`built_in()`]; [`age()`] judges the days of the prices, [`health()`] what looks
 //! wrong though it can be read. Nothing here opens a file or asks for today's date.
 
 mod age;

@@ -26,6 +26,10 @@ pub(super) struct Table {
     pub(super) file: String,
     pub(super) separator: char,
     pub(super) rows: Vec<Row>,
+    /// Rows that could not be taken apart, so that nothing else is said about them.
+    pub(super) lost: Vec<Row>,
+    /// Whether quotes swallowed rows of which nothing is known.
+    pub(super) swallowed: bool,
     /// Position of each known column.
     columns: Vec<(&'static str, usize)>,
 }
@@ -47,7 +51,14 @@ pub(super) fn read(file: &str, text: &str, schema: &Schema, report: &mut Report)
     if found.lone_returns {
         report.fixes.add(file, Fix::LineEnds);
     }
-    let mut table = Table { file: file.to_owned(), separator, rows: Vec::new(), columns: Vec::new() };
+    let mut table = Table {
+        file: file.to_owned(),
+        separator,
+        rows: Vec::new(),
+        lost: Vec::new(),
+        swallowed: !found.faults.is_empty(),
+        columns: Vec::new(),
+    };
     quotes(&table, &found, report);
     let (blank, rows): (Vec<Row>, Vec<Row>) = found.list.into_iter().partition(Row::is_blank);
     for _ in blank {
@@ -273,6 +284,7 @@ fn body(table: &mut Table, width: usize, written: usize, report: &mut Report) {
             let message = format!("column {} holds more than 64 KiB", letter(index));
             let help = "is a quote missing further up?";
             report.error(code::CELL_TOO_LARGE, table.cell_place(&row, index), message, help);
+            table.lost.push(row);
         } else if row.cells.len() == width {
             table.rows.push(row);
         } else {
@@ -280,6 +292,7 @@ fn body(table: &mut Table, width: usize, written: usize, report: &mut Report) {
             let fields = if given == 1 { "field" } else { "fields" };
             let message = format!("the row has {given} {fields}, the header has {width}");
             report.error(code::FIELD_COUNT, table.row_place(&row), message, field_help(&row, width, table));
+            table.lost.push(row);
         }
     }
 }
