@@ -1,5 +1,7 @@
 //! Text to rows and cells, each with its place; knows quotes and line ends, nothing of columns.
 
+use std::ops::Range;
+
 /// One cell as written, without its quotes.
 #[derive(Clone, Debug)]
 pub(super) struct Cell {
@@ -9,6 +11,8 @@ pub(super) struct Cell {
     /// Column of its first character, from 1.
     pub(super) column: usize,
     pub(super) quoted: bool,
+    /// Its bytes in the text that was taken apart, quotes included.
+    pub(super) span: Range<usize>,
 }
 
 /// One row of cells.
@@ -144,13 +148,13 @@ fn line_end(cursor: &mut Cursor<'_>, found: &mut Rows) {
 
 /// One cell; the cursor then stands at a separator, a line end or the end.
 fn cell(cursor: &mut Cursor<'_>, separator: char) -> Result<Cell, QuoteFault> {
-    let (line, column) = (cursor.line, cursor.column);
+    let (at, line, column) = (cursor.at, cursor.line, cursor.column);
     let is_end = |c: char| c == separator || c == '\n' || c == '\r';
     let lead = cursor.rest().len() - cursor.rest().trim_start_matches(' ').len();
     if !cursor.rest()[lead..].starts_with('"') {
         let end = cursor.rest().find(is_end).unwrap_or(cursor.rest().len());
         let text = cursor.skip(end).to_owned();
-        return Ok(Cell { text, line, column, quoted: false });
+        return Ok(Cell { text, line, column, quoted: false, span: at..cursor.at });
     }
     cursor.skip(lead + 1);
     let text = quoted(cursor).ok_or(QuoteFault::Open)?;
@@ -161,7 +165,7 @@ fn cell(cursor: &mut Cursor<'_>, separator: char) -> Result<Cell, QuoteFault> {
         // A quote that closes in a later line in the middle of a cell is most likely the opening one of that cell.
         Some(c) if !is_end(c) && cursor.line > line => Err(QuoteFault::Open),
         Some(c) if !is_end(c) => Err(QuoteFault::TextAfter),
-        _ => Ok(Cell { text, line, column, quoted: true }),
+        _ => Ok(Cell { text, line, column, quoted: true, span: at..cursor.at }),
     }
 }
 

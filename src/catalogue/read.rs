@@ -84,7 +84,7 @@ pub(super) fn draft(files: &[CatalogueFile], source: Source, base: &Catalogue) -
     draft
 }
 
-fn base_name(name: &str) -> String {
+pub(super) fn base_name(name: &str) -> String {
     name.rsplit(['/', '\\']).next().unwrap_or(name).to_lowercase()
 }
 

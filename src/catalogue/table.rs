@@ -26,6 +26,8 @@ pub(super) struct Table {
     pub(super) file: String,
     pub(super) separator: char,
     pub(super) rows: Vec<Row>,
+    /// Number of cells of the header, blank ones included.
+    pub(super) width: usize,
     /// Rows that could not be taken apart, so that nothing else is said about them.
     pub(super) lost: Vec<Row>,
     /// Whether quotes swallowed rows of which nothing is known.
@@ -39,27 +41,20 @@ const HEADER_SEARCH: usize = 10;
 const LARGEST_CELL: usize = 64 * 1024;
 
 /// Takes a text apart; `None` when no header can be found, which is then reported.
-pub(super) fn read(file: &str, text: &str, schema: &Schema, report: &mut Report) -> Option<Table> {
-    let (text, named) = separator_line(text);
+pub(super) fn read(file: &str, whole: &str, schema: &Schema, report: &mut Report) -> Option<Table> {
+    let (text, named) = separator_line(whole);
     let offset = usize::from(named.is_some());
     if named.is_some() {
         report.fixes.add(file, Fix::SeparatorLine);
     }
     let separator = named.unwrap_or_else(|| detect(text, schema));
     let mut found = lex::rows(text, separator);
-    shift(&mut found, offset);
+    shift(&mut found, offset, whole.len() - text.len());
     if found.lone_returns {
         report.fixes.add(file, Fix::LineEnds);
     }
-    let mut table = Table {
-        file: file.to_owned(),
-        separator,
-        rows: Vec::new(),
-        lost: Vec::new(),
-        swallowed: !found.faults.is_empty(),
-        columns: Vec::new(),
-    };
-    quotes(&table, &found, report);
+    let swallowed = !found.faults.is_empty();
+    quotes(file, &found, report);
     let (blank, rows): (Vec<Row>, Vec<Row>) = found.list.into_iter().partition(Row::is_blank);
     for _ in blank {
         report.fixes.add(file, Fix::BlankRow);
@@ -71,6 +66,15 @@ pub(super) fn read(file: &str, text: &str, schema: &Schema, report: &mut Report)
         return None;
     };
     let rows: Vec<Row> = rows.collect();
+    let mut table = Table {
+        file: file.to_owned(),
+        separator,
+        rows: Vec::new(),
+        width: first.cells.len(),
+        lost: Vec::new(),
+        swallowed,
+        columns: Vec::new(),
+    };
     if let Some(hint) = misplaced_header(&first, &rows, schema) {
         let message = "header row not found: the first row must be column names".to_owned();
         report.error(code::HEADER_NOT_FOUND, table.row_place(&first), message, hint);
@@ -106,10 +110,14 @@ fn separator_line(text: &str) -> (&str, Option<char>) {
     }
 }
 
-fn shift(found: &mut Rows, lines: usize) {
+/// Counts lines and bytes from the beginning of the file again.
+fn shift(found: &mut Rows, lines: usize, bytes: usize) {
     for row in &mut found.list {
         row.line += lines;
-        row.cells.iter_mut().for_each(|cell| cell.line += lines);
+        for cell in &mut row.cells {
+            cell.line += lines;
+            cell.span = cell.span.start + bytes..cell.span.end + bytes;
+        }
     }
     found.faults.iter_mut().for_each(|fault| fault.1 += lines);
 }
@@ -160,10 +168,10 @@ fn misplaced_header(first: &Row, rows: &[Row], schema: &Schema) -> Option<String
     }
 }
 
-fn quotes(table: &Table, found: &Rows, report: &mut Report) {
+fn quotes(file: &str, found: &Rows, report: &mut Report) {
     for (fault, line, column, excerpt) in &found.faults {
         let (line, column, excerpt) = (*line, *column, excerpt.clone());
-        let place = Place { file: table.file.clone(), line, column, excerpt };
+        let place = Place { file: file.to_owned(), line, column, excerpt };
         match fault {
             QuoteFault::Open => {
                 let message = format!("the quote opened in line {line} never closes");

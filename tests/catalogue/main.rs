@@ -3,6 +3,7 @@
 #![expect(clippy::unwrap_used, reason = "a test may fail by panicking")]
 
 mod built_in;
+mod edit;
 mod lookup;
 mod overlay;
 mod problem;
