@@ -115,13 +115,12 @@ proptest! {
     /// Spaces at the ends of a cell are dropped by design, so the text has none.
     #[test]
     fn text_comes_back_as_it_was_exported(
-        description in "[=+@'\"-]{0,3}[a-z,;\"'\n\r=é]{1,12}",
+        description in "[=+@'\"z-]{1,3}[a-z,;\"'\n\r=é ]{0,12}z",
         note in "\\PC{0,20}",
         lead in "[=+@\t\r'-]{0,2}",
     ) {
         let note = format!("{lead}{note}x");
         prop_assume!(!note.starts_with([' ', '\n', '\u{A0}']) && note.trim_start_matches(['\t', '\r']) == note.trim_start());
-        prop_assume!(description.trim() == description);
         let loaded = over_built_in(&[("parts.csv", &exported(&description, &note))]);
         prop_assert_eq!(printed(&loaded.problems), "");
         let part = &loaded.catalogue.parts["x"];
