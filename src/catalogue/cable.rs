@@ -34,12 +34,11 @@ const RATIO: NumberRule<'static> = NumberRule { units: &[], grouping: Grouping::
 
 /// Reads a row; `None` when it has no usable id.
 pub(super) fn read(row: &mut RowReader<'_>) -> Option<Cable> {
-    let part = row.id("part", Case::Lower)?;
+    let part = row.id("part", Case::Lower);
     let diameter = row.number("diameter_mm", MM, Least::AboveZero);
     let diameter = diameter.and_then(|mm| mm.saturating_mul(Decimal::ONE_THOUSAND).round().to_i64());
     let breaking = row.number("breaking_n", NEWTON, Least::AboveZero);
     Some(Cable {
-        part,
         z0_ohm: row.number("z0_ohm", OHM, Least::AboveZero),
         velocity_factor: velocity(row),
         loss: points(row, "loss_db_per_100m", "dB"),
@@ -49,6 +48,8 @@ pub(super) fn read(row: &mut RowReader<'_>) -> Option<Cable> {
         breaking: breaking.and_then(|newtons| newtons.to_f64()).map(Force::new),
         note: row.text("note"),
         place: row.row_place(),
+        // Last, so that a bad id does not hide what else is wrong.
+        part: part?,
     })
 }
 

@@ -58,7 +58,7 @@ fn utf16(file: &str, bytes: &[u8], unit: fn([u8; 2]) -> u16, report: &mut Report
 }
 
 fn not_utf8(file: &str, bytes: &[u8], bad: usize, report: &mut Report) {
-    let line = bytes[..bad].iter().filter(|byte| **byte == b'\n').count() + 1;
+    let line = bytes[..bad].split(|byte| *byte == b'\n').count();
     let start = bytes[..bad].iter().rposition(|byte| *byte == b'\n').map_or(0, |at| at + 1);
     let before = String::from_utf8_lossy(&bytes[start..bad]);
     let column = before.chars().count() + 1;

@@ -1,7 +1,5 @@
 //! Writing CSV that a spreadsheet opens without running anything in it.
 
-use std::fmt::Write as _;
-
 /// A cell to be written.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub enum ExportCell {
@@ -18,22 +16,21 @@ pub enum ExportCell {
 pub fn export<'a>(rows: impl IntoIterator<Item = &'a [ExportCell]>) -> String {
     let mut out = String::new();
     for row in rows {
-        for (index, cell) in row.iter().enumerate() {
-            if index > 0 {
-                out.push(',');
-            }
-            match cell {
-                ExportCell::Plain(text) => out.push_str(&quoted(text, Quotes::WhereNeeded)),
-                ExportCell::Text(text) if starts_like_formula(text) => {
-                    out.push_str(&quoted(&format!("'{text}"), Quotes::Always));
-                }
-                ExportCell::Text(text) => out.push_str(&quoted(text, Quotes::WhereNeeded)),
-            }
-        }
-        // `write!` to a string cannot fail; a row of one empty cell would otherwise be a blank line.
-        let _ = writeln!(out, "{}", if row.len() == 1 && out.ends_with('\n') { "\"\"" } else { "" });
+        let cells: Vec<String> = row.iter().map(written).collect();
+        // A row of one empty cell would otherwise be a blank line.
+        let is_blank = matches!(&cells[..], [only] if only.is_empty());
+        out.push_str(if is_blank { "\"\"" } else { "" });
+        out.push_str(&cells.join(","));
+        out.push('\n');
     }
     out
+}
+
+fn written(cell: &ExportCell) -> String {
+    match cell {
+        ExportCell::Text(text) if starts_like_formula(text) => quoted(&format!("'{text}"), Quotes::Always),
+        ExportCell::Text(text) | ExportCell::Plain(text) => quoted(text, Quotes::WhereNeeded),
+    }
 }
 
 #[derive(Clone, Copy, PartialEq, Eq)]
@@ -78,6 +75,7 @@ mod tests {
         let cells = [ExportCell::Text("=1+1".to_owned()), ExportCell::Plain("-3".to_owned())];
         assert_eq!(line(&cells), "\"'=1+1\",-3\n");
         assert_eq!(line(&[ExportCell::Text("'=1".to_owned())]), "\"''=1\"\n");
+        assert_eq!(line(&[ExportCell::Text(String::new())]), "\"\"\n");
         assert_eq!(line(&[ExportCell::Text("'tis".to_owned())]), "'tis\n");
         assert_eq!(line(&[ExportCell::Text("a \"b\", c".to_owned())]), "\"a \"\"b\"\", c\"\n");
     }

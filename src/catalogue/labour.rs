@@ -52,8 +52,11 @@ const RATIO: NumberRule<'static> = NumberRule { units: &[], grouping: Grouping::
 
 /// Reads a row of `labour.csv`; `None` when it has no usable id.
 pub(super) fn task(row: &mut RowReader<'_>) -> Option<Task> {
-    let id = row.id("task", Case::AsWritten)?;
+    let id = row.id("task", Case::AsWritten);
     let what = row.text("what");
+    if what.is_empty() {
+        row.needed_word("what");
+    }
     let unit = row.needed_word("unit");
     let hours = ["low_h", "likely_h", "high_h"].map(|name| row.needed_number(name, HOURS, Least::Zero));
     if let [Some(low), Some(likely), Some(high)] = hours
@@ -64,7 +67,6 @@ pub(super) fn task(row: &mut RowReader<'_>) -> Option<Task> {
     }
     let crew = row.whole("crew_min", RATIO, Least::AboveZero);
     Some(Task {
-        id,
         what,
         unit,
         hours: hours.map(Option::unwrap_or_default),
@@ -76,6 +78,8 @@ pub(super) fn task(row: &mut RowReader<'_>) -> Option<Task> {
         after: row.word("after"),
         learns: row.yes_no("learns"),
         note: row.text("note"),
+        // Last, so that a bad id does not hide what else is wrong.
+        id: id?,
     })
 }
 
@@ -102,12 +106,12 @@ pub(super) fn prerequisites(after: &str) -> impl Iterator<Item = &str> {
 
 /// Reads a row of `terrain.csv`; a blank multiplier is 1.
 pub(super) fn terrain(row: &mut RowReader<'_>) -> Option<TerrainRow> {
-    let class = row.id("class", Case::Lower)?;
+    let class = row.id("class", Case::Lower);
     let mut factors = BTreeMap::new();
     for name in MULTIPLIERS {
         let factor = row.number(name, RATIO, Least::Zero).unwrap_or(Decimal::ONE);
         factors.insert(name.to_owned(), factor);
     }
     let route_factor = row.number("route_factor", RATIO, Least::AboveZero).unwrap_or(Decimal::ONE);
-    Some(TerrainRow { class, factors, route_factor })
+    Some(TerrainRow { class: class?, factors, route_factor })
 }

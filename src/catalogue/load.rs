@@ -7,7 +7,7 @@ use crate::units::Money;
 
 use super::code;
 use super::model::{Catalogue, Offer, Source};
-use super::read::{CatalogueFile, Draft, draft};
+use super::read::{CatalogueFile, Draft, Lost, draft};
 use super::report::{Fixes, Report};
 
 /// A catalogue that is ready for use when `problems` has no error.
@@ -23,13 +23,13 @@ pub struct Loaded {
 
 /// Reads files, lays them over `base` and checks what they say about each other.
 ///
-/// `base` is [`super::built_in`], or an empty catalogue where the files are to stand alone.
+/// `base` is [`super::built_in()`], or an empty catalogue where the files are to stand alone.
 pub fn load(base: Catalogue, files: &[CatalogueFile], source: Source) -> Loaded {
-    let Draft { catalogue: mut given, mut report, prerequisites } = draft(files, source, &base);
+    let Draft { catalogue: mut given, mut report, prerequisites, lost } = draft(files, source, &base);
     offer_ids(&given, &base, &mut report);
     let known: BTreeSet<String> = base.parts.keys().chain(given.parts.keys()).cloned().collect();
     restore_zeros(&mut given, &known, &mut report);
-    references(&given, &known, &mut report);
+    references(&given, &known, &lost, &mut report);
     breaks(&given, &mut report);
     let catalogue = overlay(base, given);
     for (task, before, place) in prerequisites {
@@ -100,21 +100,22 @@ fn restore_zeros(given: &mut Catalogue, known: &BTreeSet<String>, report: &mut R
     }
 }
 
-fn references(given: &Catalogue, known: &BTreeSet<String>, report: &mut Report) {
+fn references(given: &Catalogue, known: &BTreeSet<String>, lost: &Lost, report: &mut Report) {
+    let is_unknown = |id: &String| !known.contains(id) && !lost.may_hold(id);
     let help = |id: &str| match nearest(id, known.iter().map(String::as_str)) {
         Some(near) => format!("did you mean `{near}`? or add its row to parts.csv"),
         None => "add its row to parts.csv".to_owned(),
     };
-    for offer in given.offers.values().filter(|offer| !known.contains(&offer.part)) {
+    for offer in given.offers.values().filter(|offer| is_unknown(&offer.part)) {
         let message = format!("the offer \"{}\" is of an unknown part \"{}\"", offer.id, offer.part);
         report.error(code::UNKNOWN_PART, offer.place.clone(), message, help(&offer.part));
     }
-    for cable in given.cables.values().filter(|cable| !known.contains(&cable.part)) {
+    for cable in given.cables.values().filter(|cable| is_unknown(&cable.part)) {
         let message = format!("the cable data are of an unknown part \"{}\"", cable.part);
         report.error(code::UNKNOWN_PART, cable.place.clone(), message, help(&cable.part));
     }
     for part in given.parts.values() {
-        for alternate in part.alternates.iter().filter(|id| !known.contains(*id)) {
+        for alternate in part.alternates.iter().filter(|id| is_unknown(id)) {
             let message = format!("the alternate \"{alternate}\" of \"{}\" is an unknown part", part.id);
             report.warning(code::UNKNOWN_ALTERNATE, part.place.clone(), message, help(alternate));
         }
@@ -124,7 +125,9 @@ fn references(given: &Catalogue, known: &BTreeSet<String>, report: &mut Report) 
 /// Price breaks of one part, pack and supplier: more packs must not cost more each, and the rows ascend.
 fn breaks(given: &Catalogue, report: &mut Report) {
     let mut lists = BTreeMap::<_, Vec<&Offer>>::new();
-    for offer in given.offers.values().filter(|offer| offer.available.is_none()) {
+    // A limited number is a special offer beside the list; a pack of nothing has been reported.
+    let listed = |offer: &&Offer| offer.available.is_none() && !offer.pack.is_zero();
+    for offer in given.offers.values().filter(listed) {
         let key = (&offer.part, offer.pack, &offer.supplier, &offer.currency);
         lists.entry(key).or_default().push(offer);
     }
@@ -139,7 +142,7 @@ fn breaks(given: &Catalogue, report: &mut Report) {
 fn break_pair(first: &Offer, second: &Offer, report: &mut Report) {
     if second.min_packs <= first.min_packs {
         let message = format!(
-            "the price break \"{}\" from {} packs stands after \"{}\" from {} packs",
+            "the price break \"{}\" (min_packs {}) stands after \"{}\" (min_packs {})",
             second.id, second.min_packs, first.id, first.min_packs
         );
         let help = "sort the rows of a part by min_packs, each once (or give them different suppliers)";

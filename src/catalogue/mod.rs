@@ -1,6 +1,6 @@
 //! CSV files that people edit in a spreadsheet, to a checked catalogue.
 //!
-//! [`load`] reads a user's files over [`built_in`]; [`age`] judges the days of the prices, [`health`] what looks
+//! [`load()`] reads a user's files over [`built_in()`]; [`age()`] judges the days of the prices, [`health()`] what looks
 //! wrong though it can be read. Nothing here opens a file or asks for today's date.
 
 mod age;
@@ -11,6 +11,7 @@ pub mod code;
 mod currency;
 mod date;
 mod decode;
+mod edit;
 mod export;
 mod health;
 mod labour;
@@ -31,6 +32,7 @@ mod template;
 pub use age::{FRESH_DAYS, age};
 pub use built_in::{built_in, built_in_loaded, built_in_texts};
 pub use choice::PartChoice;
+pub use edit::{CellEdit, NoEdit, edited};
 pub use export::{ExportCell, export};
 pub use health::health;
 pub use load::{Loaded, load, overlay};

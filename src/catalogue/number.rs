@@ -67,7 +67,7 @@ pub(super) fn formula(text: &str) -> Option<Remark> {
     })
 }
 
-/// The text with typographic minus signs, quotes and spaces as plain ones.
+/// The text with typographic minus signs, quotes and spaces as plain ones, and without quotes around it.
 pub(super) fn plain_signs(text: &str) -> String {
     let plain = |c| match c {
         '\u{2013}' | '\u{2212}' | '\u{2010}' | '\u{2011}' => '-',
@@ -76,7 +76,10 @@ pub(super) fn plain_signs(text: &str) -> String {
         '\u{A0}' | '\u{2009}' | '\u{202F}' | '\u{2007}' => ' ',
         other => other,
     };
-    text.chars().map(plain).collect::<String>().trim().to_owned()
+    let plain: String = text.chars().map(plain).collect();
+    let bare = plain.trim().trim_matches('"').trim();
+    // An apostrophe in front is how spreadsheets mark a number that is kept as text.
+    bare.strip_prefix('\'').unwrap_or(bare).to_owned()
 }
 
 /// The remark for a cell that a spreadsheet turned into a time, date or the like.
@@ -94,7 +97,7 @@ pub(super) fn looks_changed(text: &str) -> bool {
     let parts: Vec<&str> = lower.split([':', '/', '-']).collect();
     let is_digits = |part: &&str| !part.is_empty() && part.bytes().all(|b| b.is_ascii_digit());
     let is_date_part = |part: &&str| is_digits(part) || month(part).is_some();
-    parts.len() >= 2 && parts.iter().all(is_date_part) && parts.iter().any(|part| is_digits(&part))
+    parts.len() >= 2 && parts.iter().all(is_date_part) && parts.iter().any(is_digits)
 }
 
 /// The number of an English month name or its first three letters.
@@ -149,16 +152,11 @@ fn value(
     }
     let digits = digits_of(text, rule, accepted)?;
     let plain = separators(digits, origin, rule.grouping, accepted)?;
-    match Decimal::from_str_exact(plain.trim_start_matches('+')) {
-        Ok(value) => Ok(value),
-        Err(rust_decimal::Error::ConversionTo(_) | rust_decimal::Error::ErrorString(_)) => {
-            Err(not_a_number(text))
-        }
-        Err(_) => {
-            let message = format!("is \"{text}\": more digits than can be kept exactly");
-            Err(Remark::new(code::NUMBER_TOO_LONG, message, "at most 28 digits are kept"))
-        }
-    }
+    // Only digits, one sign and one point are left, so that nothing but their number can be wrong.
+    Decimal::from_str_exact(plain.trim_start_matches('+')).map_err(|_| {
+        let message = format!("is \"{text}\": more digits than can be kept exactly");
+        Remark::new(code::NUMBER_TOO_LONG, message, "at most 28 digits are kept")
+    })
 }
 
 fn is_exponent(text: &str) -> bool {
@@ -294,6 +292,9 @@ mod tests {
         assert_eq!(good("-3", COMMA).0, "-3");
         assert_eq!(good("+3.5", COMMA).0, "3.5");
         assert_eq!(good(".5", COMMA).0, "0.5");
+        assert_eq!(good("\u{201C}31.00\u{201D}", COMMA).0, "31.00");
+        assert_eq!(good("'31.00", COMMA).0, "31.00");
+        assert_eq!(bad("\u{2013}3 ft", COMMA), "csv-mixed-units");
         assert_eq!(bad("123456789012345678901234567890.12", COMMA), "csv-number-too-long");
     }
 

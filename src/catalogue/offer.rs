@@ -32,7 +32,6 @@ pub(super) const SCHEMA: Schema = Schema {
     ],
 };
 
-const PRICE: NumberRule<'static> = NumberRule { units: &[], grouping: Grouping::Possible };
 const COUNT: NumberRule<'static> = NumberRule { units: &[], grouping: Grouping::Possible };
 const DAYS: NumberRule<'static> = NumberRule { units: &["d", "days", "day"], grouping: Grouping::Absurd };
 
@@ -102,7 +101,7 @@ fn pack(row: &mut RowReader<'_>, unit: Option<(Unit, Counted)>) -> Decimal {
         None => &[],
     };
     let rule = NumberRule { units, grouping: Grouping::Possible };
-    let pack = row.needed_number("pack", rule, Least::AboveZero).unwrap_or(Decimal::ONE);
+    let pack = row.needed_number("pack", rule, Least::AboveZero).unwrap_or_default();
     match unit {
         Some((_, Counted::InFeet)) => metres(pack),
         _ => pack,
@@ -146,5 +145,10 @@ fn price(row: &mut RowReader<'_>, currency: Option<&Currency>) -> Option<Money> 
         row.warning("price", code::CURRENCY_IN_PRICE, &message, format!("write \"{amount}\""));
     }
     let from = if sign.is_empty() { text.as_str() } else { amount };
-    row.number_in("price", from, PRICE, Least::Zero).map(Money::new)
+    // In a currency of three decimals `1.250` is an everyday price.
+    let grouping = match currency.map(Currency::decimals) {
+        Some(3) => Grouping::Absurd,
+        _ => Grouping::Possible,
+    };
+    row.number_in("price", from, NumberRule { units: &[], grouping }, Least::Zero).map(Money::new)
 }

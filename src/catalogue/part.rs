@@ -75,7 +75,7 @@ pub(super) fn metres(feet: Decimal) -> Decimal {
 
 /// Reads a row; `None` when it has no usable id. Whatever else is wrong is reported and left at its default.
 pub(super) fn read(row: &mut RowReader<'_>, source: Source) -> Option<(Part, Counted)> {
-    let id = row.id("part", Case::Lower)?;
+    let id = row.id("part", Case::Lower);
     let role = role(row);
     let description = row.text("description");
     if description.is_empty() {
@@ -84,11 +84,10 @@ pub(super) fn read(row: &mut RowReader<'_>, source: Source) -> Option<(Part, Cou
     let (unit, counted) = unit(row);
     let mut weight_kg = row.number("weight_kg", WEIGHT, Least::Zero);
     if counted == Counted::InFeet {
-        weight_kg = weight_kg.map(|weight| weight / METRES_PER_FOOT);
+        weight_kg = weight_kg.and_then(|weight| weight.checked_div(METRES_PER_FOOT));
     }
     let tax_class = Some(row.word("tax_class")).filter(|class| !class.is_empty());
     let part = Part {
-        id,
         role,
         description,
         unit,
@@ -100,6 +99,8 @@ pub(super) fn read(row: &mut RowReader<'_>, source: Source) -> Option<(Part, Cou
         note: row.text("note"),
         place: row.row_place(),
         source,
+        // Last, so that a bad id does not hide what else is wrong.
+        id: id?,
     };
     Some((part, counted))
 }

@@ -1,6 +1,6 @@
 //! The five files together: which is which, duplicates, the order of reading.
 
-use std::collections::BTreeMap;
+use std::collections::{BTreeMap, BTreeSet};
 
 use crate::problem::{Place, Problems, nearest};
 
@@ -30,12 +30,33 @@ pub(super) struct Draft {
     pub(super) report: Report,
     /// The prerequisites of tasks, each with its task and place.
     pub(super) prerequisites: Vec<(String, String, Place)>,
+    /// Parts whose rows could not be read, which has been reported.
+    pub(super) lost: Lost,
+}
+
+/// Parts that stand in a file but could not be read.
+#[derive(Debug, PartialEq, Eq)]
+pub(super) enum Lost {
+    /// These ids.
+    Ids(BTreeSet<String>),
+    /// Nobody knows which.
+    Unknown,
+}
+
+impl Lost {
+    /// Whether a part that is not in the catalogue may be one of them.
+    pub(super) fn may_hold(&self, id: &str) -> bool {
+        match self {
+            Self::Ids(ids) => ids.contains(id),
+            Self::Unknown => true,
+        }
+    }
 }
 
 /// Reads the files of a catalogue, each by itself.
 ///
 /// Every mistake is reported; when there are errors, the catalogue is good for finding further mistakes only.
-/// What one file says about another is checked by [`super::load`].
+/// What one file says about another is checked by [`super::load()`].
 pub fn read(files: &[CatalogueFile], source: Source) -> (Catalogue, Problems, Fixes) {
     let draft = draft(files, source, &Catalogue::default());
     let (problems, fixes) = draft.report.finish();
@@ -44,11 +65,17 @@ pub fn read(files: &[CatalogueFile], source: Source) -> (Catalogue, Problems, Fi
 
 /// Reads files; `base` says in what unit parts are counted that these files do not define.
 pub(super) fn draft(files: &[CatalogueFile], source: Source, base: &Catalogue) -> Draft {
-    let mut draft =
-        Draft { catalogue: Catalogue::default(), report: Report::default(), prerequisites: Vec::new() };
+    let mut draft = Draft {
+        catalogue: Catalogue::default(),
+        report: Report::default(),
+        prerequisites: Vec::new(),
+        lost: Lost::Ids(BTreeSet::new()),
+    };
     let known = |part: &super::Part| (part.id.clone(), (part.unit, Counted::InItsUnit));
     let mut units: Units = base.parts.values().map(known).collect();
-    files.iter().for_each(|file| known_file(file, &mut draft.report));
+    for file in files {
+        known_file(file, &mut draft.report);
+    }
     each(files, &part::SCHEMA, &mut draft, |table, draft| parts(table, source, &mut units, draft));
     each(files, &offer::SCHEMA, &mut draft, |table, draft| offers(table, source, &units, draft));
     each(files, &cable::SCHEMA, &mut draft, cables);
@@ -57,7 +84,7 @@ pub(super) fn draft(files: &[CatalogueFile], source: Source, base: &Catalogue) -
     draft
 }
 
-fn base_name(name: &str) -> String {
+pub(super) fn base_name(name: &str) -> String {
     name.rsplit(['/', '\\']).next().unwrap_or(name).to_lowercase()
 }
 
@@ -84,8 +111,10 @@ fn each(
     for file in files.iter().filter(|file| base_name(&file.name) == schema.file) {
         let text = decode::decode(&file.name, &file.bytes, &mut draft.report);
         let table = text.and_then(|text| table::read(&file.name, &text, schema, &mut draft.report));
-        if let Some(table) = table {
-            rows(&table, draft);
+        match table {
+            Some(table) => rows(&table, draft),
+            None if schema.file == part::SCHEMA.file => draft.lost = Lost::Unknown,
+            None => {}
         }
     }
 }
@@ -104,6 +133,13 @@ fn is_new(id: &str, column: &str, seen: &mut BTreeMap<String, Place>, row: &mut 
 }
 
 fn parts(table: &Table, source: Source, units: &mut Units, draft: &mut Draft) {
+    match (&mut draft.lost, table.column("part")) {
+        (Lost::Ids(ids), Some(column)) if !table.swallowed => {
+            let cells = table.lost.iter().filter_map(|row| row.cells.get(column));
+            ids.extend(cells.map(|cell| cell.text.trim().to_lowercase()));
+        }
+        (Lost::Ids(_) | Lost::Unknown, _) => draft.lost = Lost::Unknown,
+    }
     let mut seen = draft.catalogue.parts.values().map(|part| (part.id.clone(), part.place.clone())).collect();
     for row in &table.rows {
         let mut row = RowReader { table, row, report: &mut draft.report };

@@ -132,7 +132,9 @@ impl Report {
 /// The problems in order, errors beyond the cap counted in one line.
 fn capped(problems: Vec<Problem>) -> Problems {
     let mut all = Problems::default();
-    problems.into_iter().for_each(|problem| all.push(problem));
+    for problem in problems {
+        all.push(problem);
+    }
     let mut kept = Problems::default();
     let mut errors = 0;
     for problem in all.sorted() {

@@ -143,7 +143,7 @@ impl RowReader<'_> {
             Case::Lower => written.to_lowercase(),
             Case::AsWritten => written.clone(),
         };
-        match id_fault(&id) {
+        match id_fault(&written) {
             Some(remark) => {
                 self.refuse(name, &remark);
                 return None;
@@ -302,7 +302,7 @@ pub(super) fn id_fault(id: &str) -> Option<Remark> {
         return Some(Remark::new(code::ID_DATE, message, help));
     }
     let legal = |c: char| c.is_ascii_alphanumeric() || matches!(c, '.' | '_' | '-');
-    let starts = id.starts_with(|c: char| c.is_ascii_alphanumeric());
+    let starts = lower.starts_with(|c: char| c.is_ascii_alphanumeric());
     if id.len() > 40 || !starts || !id.chars().all(legal) {
         let help = "1 to 40 of a-z, 0-9, `.`, `_` and `-`, a letter first";
         return Some(Remark::new(code::BAD_ID, format!("is \"{id}\", not an id"), help));

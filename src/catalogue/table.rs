@@ -26,6 +26,12 @@ pub(super) struct Table {
     pub(super) file: String,
     pub(super) separator: char,
     pub(super) rows: Vec<Row>,
+    /// Number of cells of the header, blank ones included.
+    pub(super) width: usize,
+    /// Rows that could not be taken apart, so that nothing else is said about them.
+    pub(super) lost: Vec<Row>,
+    /// Whether quotes swallowed rows of which nothing is known.
+    pub(super) swallowed: bool,
     /// Position of each known column.
     columns: Vec<(&'static str, usize)>,
 }
@@ -35,22 +41,24 @@ const HEADER_SEARCH: usize = 10;
 const LARGEST_CELL: usize = 64 * 1024;
 
 /// Takes a text apart; `None` when no header can be found, which is then reported.
-pub(super) fn read(file: &str, text: &str, schema: &Schema, report: &mut Report) -> Option<Table> {
-    let (text, named) = separator_line(text);
+pub(super) fn read(file: &str, whole: &str, schema: &Schema, report: &mut Report) -> Option<Table> {
+    let (text, named) = separator_line(whole);
     let offset = usize::from(named.is_some());
     if named.is_some() {
         report.fixes.add(file, Fix::SeparatorLine);
     }
     let separator = named.unwrap_or_else(|| detect(text, schema));
     let mut found = lex::rows(text, separator);
-    shift(&mut found, offset);
+    shift(&mut found, offset, whole.len() - text.len());
     if found.lone_returns {
         report.fixes.add(file, Fix::LineEnds);
     }
-    let mut table = Table { file: file.to_owned(), separator, rows: Vec::new(), columns: Vec::new() };
-    quotes(&table, &found, report);
-    let (blank, rows): (Vec<Row>, Vec<Row>) = found.rows.into_iter().partition(Row::is_blank);
-    blank.iter().for_each(|_| report.fixes.add(file, Fix::BlankRow));
+    let swallowed = !found.faults.is_empty();
+    quotes(file, &found, report);
+    let (blank, rows): (Vec<Row>, Vec<Row>) = found.list.into_iter().partition(Row::is_blank);
+    for _ in blank {
+        report.fixes.add(file, Fix::BlankRow);
+    }
     let mut rows = rows.into_iter();
     let Some(first) = rows.next() else {
         let place = Place { file: file.to_owned(), line: 1, column: 1, excerpt: String::new() };
@@ -58,6 +66,15 @@ pub(super) fn read(file: &str, text: &str, schema: &Schema, report: &mut Report)
         return None;
     };
     let rows: Vec<Row> = rows.collect();
+    let mut table = Table {
+        file: file.to_owned(),
+        separator,
+        rows: Vec::new(),
+        width: first.cells.len(),
+        lost: Vec::new(),
+        swallowed,
+        columns: Vec::new(),
+    };
     if let Some(hint) = misplaced_header(&first, &rows, schema) {
         let message = "header row not found: the first row must be column names".to_owned();
         report.error(code::HEADER_NOT_FOUND, table.row_place(&first), message, hint);
@@ -75,7 +92,7 @@ pub(super) fn read(file: &str, text: &str, schema: &Schema, report: &mut Report)
     }
     let width = header(&mut table, &first, schema, report);
     table.rows = rows;
-    body(&mut table, width, report);
+    body(&mut table, width, first.cells.len(), report);
     Some(table)
 }
 
@@ -93,10 +110,14 @@ fn separator_line(text: &str) -> (&str, Option<char>) {
     }
 }
 
-fn shift(found: &mut Rows, lines: usize) {
-    for row in &mut found.rows {
+/// Counts lines and bytes from the beginning of the file again.
+fn shift(found: &mut Rows, lines: usize, bytes: usize) {
+    for row in &mut found.list {
         row.line += lines;
-        row.cells.iter_mut().for_each(|cell| cell.line += lines);
+        for cell in &mut row.cells {
+            cell.line += lines;
+            cell.span = cell.span.start + bytes..cell.span.end + bytes;
+        }
     }
     found.faults.iter_mut().for_each(|fault| fault.1 += lines);
 }
@@ -147,10 +168,10 @@ fn misplaced_header(first: &Row, rows: &[Row], schema: &Schema) -> Option<String
     }
 }
 
-fn quotes(table: &Table, found: &Rows, report: &mut Report) {
+fn quotes(file: &str, found: &Rows, report: &mut Report) {
     for (fault, line, column, excerpt) in &found.faults {
         let (line, column, excerpt) = (*line, *column, excerpt.clone());
-        let place = Place { file: table.file.clone(), line, column, excerpt };
+        let place = Place { file: file.to_owned(), line, column, excerpt };
         match fault {
             QuoteFault::Open => {
                 let message = format!("the quote opened in line {line} never closes");
@@ -218,16 +239,13 @@ fn missing(
         // A needed column is looked for among the unknown names, each of which can be meant once.
         let near = unknown.iter().position(|(_, other)| nearest(other, [*name]).is_some());
         let message = format!("the needed column `{name}` is missing");
-        match near.map(|at| unknown.remove(at)) {
+        let (place, help) = match near.map(|at| unknown.remove(at)) {
             Some((index, other)) => {
-                let help = format!("is \"{other}\" meant? rename it to `{name}`");
-                report.error(code::MISSING_COLUMN, table.cell_place(first, index), message, help);
+                (table.cell_place(first, index), format!("is \"{other}\" meant? rename it to `{name}`"))
             }
-            None => {
-                let help = format!("add it: {} needs {}", schema.file, needed(schema));
-                report.error(code::MISSING_COLUMN, table.row_place(first), message, help);
-            }
-        }
+            None => (table.row_place(first), format!("add it: {} needs {}", schema.file, needed(schema))),
+        };
+        report.error(code::MISSING_COLUMN, place, message, help);
     }
 }
 
@@ -259,11 +277,14 @@ fn unknown_column(
     report.warning(code::UNKNOWN_COLUMN, place, format!("the column \"{name}\" is not known"), help);
 }
 
-/// Drops empty cells at the end, reports rows of the wrong width and cells that are too large.
-fn body(table: &mut Table, width: usize, report: &mut Report) {
+/// Drops empty cells beyond `width`, the last named of `written` columns; reports rows of the wrong width and cells that are too large.
+fn body(table: &mut Table, width: usize, written: usize, report: &mut Report) {
     let rows = std::mem::take(&mut table.rows);
     for mut row in rows {
-        if row.cells.len() > width && row.cells[width..].iter().all(|cell| cell.text.trim().is_empty()) {
+        let is_padded = row.cells.len() > width
+            && row.cells[width..].iter().all(|cell| cell.text.trim().is_empty())
+            && (row.cells.len() <= written || split_number(&row, table).is_none());
+        if is_padded {
             row.cells.truncate(width);
             report.fixes.add(&table.file, Fix::BlankColumn);
         }
@@ -271,6 +292,7 @@ fn body(table: &mut Table, width: usize, report: &mut Report) {
             let message = format!("column {} holds more than 64 KiB", letter(index));
             let help = "is a quote missing further up?";
             report.error(code::CELL_TOO_LARGE, table.cell_place(&row, index), message, help);
+            table.lost.push(row);
         } else if row.cells.len() == width {
             table.rows.push(row);
         } else {
@@ -278,17 +300,26 @@ fn body(table: &mut Table, width: usize, report: &mut Report) {
             let fields = if given == 1 { "field" } else { "fields" };
             let message = format!("the row has {given} {fields}, the header has {width}");
             report.error(code::FIELD_COUNT, table.row_place(&row), message, field_help(&row, width, table));
+            table.lost.push(row);
         }
     }
 }
 
+/// Two neighbouring cells that look like the halves of a number with a decimal comma, those of the price first.
+fn split_number<'r>(row: &'r Row, table: &Table) -> Option<(&'r str, &'r str)> {
+    let digits = |text: &str| !text.is_empty() && text.bytes().all(|b| b.is_ascii_digit());
+    let pair = |index: usize| {
+        let (whole, part) = (row.cells.get(index)?.text.trim(), row.cells.get(index + 1)?.text.trim());
+        // Two digits behind the comma are money; one digit is more likely a count.
+        (table.separator == ',' && digits(whole) && digits(part) && part.len() == 2).then_some((whole, part))
+    };
+    table.column("price").and_then(pair).or_else(|| (0..row.cells.len()).find_map(pair))
+}
+
 fn field_help(row: &Row, width: usize, table: &Table) -> String {
-    let digits = |cell: &Cell| !cell.text.is_empty() && cell.text.bytes().all(|b| b.is_ascii_digit());
-    let split =
-        row.cells.windows(2).find(|pair| digits(&pair[0]) && digits(&pair[1]) && pair[1].text.len() <= 2);
-    match split {
-        Some(pair) if row.cells.len() > width && table.separator == ',' => {
-            format!("decimal comma? write {0}.{1} instead of {0},{1}", pair[0].text, pair[1].text)
+    match split_number(row, table) {
+        Some((whole, part)) if row.cells.len() > width => {
+            format!("decimal comma? write {whole}.{part} instead of {whole},{part}")
         }
         _ if row.cells.len() > width => "a cell that contains the separator needs quotes".to_owned(),
         _ => "blank cells need their separators too".to_owned(),

@@ -80,11 +80,8 @@ fn a_worked_example_adds_up() {
     let sum = |index: usize| -> Decimal {
         counts.iter().map(|(task, count)| catalogue.labour[*task].hours[index] * Decimal::from(*count)).sum()
     };
-    let rounded = [0, 1, 2].map(|index| sum(index).round_dp(2).to_string());
-    assert_eq!(
-        rounded,
-        ["3.534", "6.94", "22.22"].map(|text| { text.parse::<Decimal>().unwrap().round_dp(2).to_string() })
-    );
+    let rounded = [0, 1, 2].map(|index| sum(index).round_dp(2).normalize().to_string());
+    assert_eq!(rounded, ["3.53", "6.94", "22.22"]);
 }
 
 #[test]

@@ -18,7 +18,7 @@ fn decimals_are_exact_from_text_to_money() {
 #[test]
 fn all_mistakes_of_all_files_are_reported_at_once() {
     let parts =
-        "part,role,description,unit\ngood,plug,Plug,each\nbad id,plug,Plug,each\nother,plugg,Plug,each\n";
+        "part,role,description,unit\ngood,plug,Plug,each\nbad id,plug,Plug,dozen\nother,plugg,Plug,each\n";
     let offers = "part,offer,pack,price,currency,priced_on\n\
         good,o1,=5*5,22.00,EURO,02/03/2026\ngood,o2,25,-3,EUR,46083\nnowhere,o3,1,1,EUR,\n";
     let loaded = over_built_in(&[("parts.csv", parts), ("offers.csv", offers)]);
@@ -30,9 +30,30 @@ fn all_mistakes_of_all_files_are_reported_at_once() {
         "csv-date-serial",
         "csv-unknown-part",
         "csv-bad-id",
+        "csv-unknown-unit",
         "csv-unknown-role",
     ];
     assert_eq!(codes(&loaded.problems), expected);
+}
+
+#[test]
+fn one_mistake_is_one_report() {
+    // The row of `lost` cannot be taken apart; its offer and cable data are not blamed for that.
+    let parts = "part,role,description,unit\nlost,cable,Coax, foam,m\n";
+    let offers = "part,offer,pack,price,currency\nlost,o1,305,90.00,EUR\n";
+    let cables = "part,velocity_factor\nlost,0.82\n";
+    let loaded = over_built_in(&[("parts.csv", parts), ("offers.csv", offers), ("cables.csv", cables)]);
+    assert_eq!(codes(&loaded.problems), ["csv-field-count"]);
+    let loaded = over_built_in(&[("parts.csv", "a,b,c\n1,2,3\n"), ("offers.csv", offers)]);
+    assert_eq!(codes(&loaded.problems), ["csv-header-not-found"]);
+}
+
+#[test]
+fn three_decimals_are_everyday_money_in_some_currencies() {
+    let text = "part,offer,pack,price,currency\nplug-f-6,a,25,1.250,KWD\nplug-f-11,b,25,1.250,EUR\n";
+    let loaded = over_built_in(&[("offers.csv", text)]);
+    assert_eq!(codes(&loaded.problems), ["csv-thousands-ambiguous"]);
+    assert_eq!(loaded.catalogue.offers["a"].price.unwrap().to_string(), "1.250");
 }
 
 #[test]
@@ -94,13 +115,12 @@ proptest! {
     /// Spaces at the ends of a cell are dropped by design, so the text has none.
     #[test]
     fn text_comes_back_as_it_was_exported(
-        description in "[=+@'\"-]{0,3}[a-z,;\"'\n\r=é]{1,12}",
+        description in "[=+@'\"z-]{1,3}[a-z,;\"'\n\r=é ]{0,12}z",
         note in "\\PC{0,20}",
         lead in "[=+@\t\r'-]{0,2}",
     ) {
         let note = format!("{lead}{note}x");
         prop_assume!(!note.starts_with([' ', '\n', '\u{A0}']) && note.trim_start_matches(['\t', '\r']) == note.trim_start());
-        prop_assume!(description.trim() == description);
         let loaded = over_built_in(&[("parts.csv", &exported(&description, &note))]);
         prop_assert_eq!(printed(&loaded.problems), "");
         let part = &loaded.catalogue.parts["x"];
@@ -122,7 +142,7 @@ proptest! {
 
     /// Text near to a catalogue: legal headers with hostile cells.
     #[test]
-    fn no_cells_break_the_reader(cells in proptest::collection::vec("[0-9a-zEé€$%=+,.;:'\" /-]{0,8}", 9)) {
+    fn no_cells_break_the_reader(cells in proptest::collection::vec("([0-9]{0,30}|[0-9a-zEé€$%=+,.;:'\" /-]{0,8})", 9)) {
         let offers = format!("part,offer,pack,price,currency,priced_on,min_packs,available,lead_days\n{}\n", cells.join(","));
         let cables = format!("part,z0_ohm,velocity_factor,loss_db_per_100m\nplug-f-6,{}\n", cells[..3].join(","));
         let _ = over_built_in(&[("offers.csv", &offers), ("cables.csv", &cables)]);
