@@ -17,6 +17,7 @@ pub(super) fn compose(
     spec: &ArraySpec,
     inner: Option<&Stage>,
     outer: Option<&Stage>,
+    design: Vec<DesignWeight>,
     context: &Context,
     names: &mut Names,
 ) -> ArrayPlan {
@@ -24,11 +25,9 @@ pub(super) fn compose(
     let (inner_stage, outer_stage) = (inner.unwrap_or(&unit), outer.unwrap_or(&unit));
     let frame = Frame::new(spec.centre, spec.heading);
     let mut builder = Builder::new(spec, context, names, Layout::new(spec.heading, frame));
-    let mut design = Vec::new();
     for cell in &outer_stage.seats {
         for seat in &inner_stage.seats {
             builder.add_element(cell.at.plus(seat.at));
-            design.push(seat.weight.within(cell.weight));
             builder.roles.push(role_name(inner.map(|_| seat), outer.map(|_| cell)));
         }
     }

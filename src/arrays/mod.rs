@@ -23,7 +23,7 @@ use rust_decimal::Decimal;
 pub use hub::LineCost;
 pub use stage::{Directive, Recipe, Seat, Stage};
 
-use crate::plan::ArrayPlan;
+use crate::plan::{ArrayPlan, DesignWeight};
 use crate::project::{ArraySpec, EndfireStage, SitePoint};
 use crate::units::{Diameter, ElectricalLength, Frequency, Length};
 
@@ -110,8 +110,20 @@ pub fn stages(spec: &ArraySpec, ratio: Decimal, design: Frequency) -> (Option<St
     (inner, spec.broadside.as_ref().map(broadside::expand))
 }
 
+/// The weights that the elements are meant to have, cell by cell from the left, front to rear within a cell.
+pub fn design_weights(spec: &ArraySpec, ratio: Decimal, design: Frequency) -> Vec<DesignWeight> {
+    let (inner, outer) = stages(spec, ratio, design);
+    let weights = |stage: Option<Stage>| match stage {
+        Some(stage) => stage.seats.iter().map(|seat| seat.weight).collect(),
+        None => vec![DesignWeight::UNIT],
+    };
+    let (seats, cells): (Vec<DesignWeight>, Vec<DesignWeight>) = (weights(inner), weights(outer));
+    cells.iter().flat_map(|cell| seats.iter().map(|seat| seat.within(*cell))).collect()
+}
+
 /// Expands one array into its layout and feed tree.
 pub fn expand(spec: &ArraySpec, ratio: Decimal, context: &Context, names: &mut Names) -> ArrayPlan {
     let (inner, outer) = stages(spec, ratio, context.design);
-    compose::compose(spec, inner.as_ref(), outer.as_ref(), context, names)
+    let design = design_weights(spec, ratio, context.design);
+    compose::compose(spec, inner.as_ref(), outer.as_ref(), design, context, names)
 }

@@ -108,7 +108,7 @@ fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Fai
     problems.extend(settled.problems);
     let wanted = wanted_options(&project, arguments.option.as_deref())?;
     let mut results = Vec::new();
-    checked.remarks = remarks(&settled.designs);
+    checked.remarks = remarks(&project, &settled.designs);
     for design in settled.designs.into_iter().filter(|design| wanted.contains(&design.option)) {
         let takeoff = takeoff::take_off(&project, &catalogue, &design);
         let (bill, noticed) = pricing::price(&project, &catalogue, &takeoff);
@@ -125,10 +125,10 @@ fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Fai
 }
 
 /// What the search for the best delay and the noise budget found, an array a line or two.
-fn remarks(designs: &[design::Design]) -> Vec<String> {
+fn remarks(project: &Project, designs: &[design::Design]) -> Vec<String> {
     let mut lines = Vec::new();
     for array in designs.iter().flat_map(|design| &design.arrays) {
-        lines.extend(design::best_in_words(&array.plan.name, &array.delay));
+        lines.extend(design::best_in_words(project, array));
         lines.push(format!("{}: {}", array.plan.name, array.amplifier_reason));
     }
     lines.dedup();

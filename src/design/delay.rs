@@ -3,8 +3,9 @@
 use rust_decimal::Decimal;
 use rust_decimal::prelude::{FromPrimitive, ToPrimitive};
 
-use super::DelayChoice;
-use crate::arrays::{self, Context, Names};
+use super::ArrayDesign;
+use crate::arrays;
+use crate::plan::Layout;
 use crate::project::{ArraySpec, DelayRatio, EndfireStage, Phasing, Project};
 use crate::radio::DelayCurve;
 use crate::reception::{self, Ends};
@@ -23,43 +24,50 @@ fn asked(spec: &ArraySpec) -> Option<DelayRatio> {
 }
 
 /// Finds the ratio, searching 0.4 to 1.0 at the design frequency with matched terminations and nothing lost.
-pub(super) fn choose(project: &Project, spec: &ArraySpec, context: &Context) -> DelayChoice {
-    let Some(asked) = asked(spec) else { return DelayChoice { ratio: Decimal::ONE, curve: None } };
-    let curve = curve(project, spec, context);
+///
+/// `layout` may come from any ratio: the delay moves nothing.
+pub(super) fn choose(project: &Project, spec: &ArraySpec, layout: &Layout) -> Decimal {
     let found = |pick: fn(&DelayCurve) -> f64| {
-        let ratio = curve.as_ref().map(pick).and_then(Decimal::from_f64);
+        let ratio = curve(project, spec, layout).as_ref().map(pick).and_then(Decimal::from_f64);
         ratio.map_or(Decimal::ONE, |ratio| ratio.round_dp(2).normalize())
     };
-    let ratio = match asked {
-        DelayRatio::Ratio(ratio) => ratio,
-        DelayRatio::BestRear => found(|curve| curve.best_rear.ratio),
-        DelayRatio::BestRdf => found(|curve| curve.best_rdf.ratio),
-    };
-    DelayChoice { ratio, curve }
+    match asked(spec) {
+        None => Decimal::ONE,
+        Some(DelayRatio::Ratio(ratio)) => ratio,
+        Some(DelayRatio::BestRear) => found(|curve| curve.best_rear.ratio),
+        Some(DelayRatio::BestRdf) => found(|curve| curve.best_rdf.ratio),
+    }
 }
 
-fn curve(project: &Project, spec: &ArraySpec, context: &Context) -> Option<DelayCurve> {
-    let plan_at = |ratio: f64| {
-        let ratio = Decimal::from_f64(ratio).unwrap_or(Decimal::ONE).round_dp(4);
-        arrays::expand(spec, ratio, context, &mut Names::default())
-    };
-    let soil = reception::soil(project.site.ground);
+/// What each ratio from 0.4 to 1.0 would give; nothing for an array without such a delay.
+fn curve(project: &Project, spec: &ArraySpec, layout: &Layout) -> Option<DelayCurve> {
+    asked(spec)?;
     let frequency = project.frequency;
-    let weights_at = |ratio| reception::designed(&plan_at(ratio), frequency);
-    reception::delay_curve(&plan_at(1.0), soil, Ends::Matched, frequency, weights_at).ok()
+    let weights_at = |ratio: f64| {
+        let ratio = Decimal::from_f64(ratio).unwrap_or(Decimal::ONE).round_dp(4);
+        reception::complex(&arrays::design_weights(spec, ratio, frequency), frequency)
+    };
+    reception::delay_curve(layout, reception::soil(project.site.ground), Ends::Matched, frequency, weights_at)
+        .ok()
+}
+
+/// The delay curve of a settled array at the design frequency; nothing for an array without such a delay.
+pub fn delay_curve(project: &Project, array: &ArrayDesign) -> Option<DelayCurve> {
+    curve(project, &array.spec, &array.plan.layout)
 }
 
 /// What "best-rear" and "best-rdf" would give beside the ratio used; nothing without a curve.
-pub fn best_in_words(array: &str, choice: &DelayChoice) -> Option<String> {
-    let curve = choice.curve.as_ref()?;
-    let ratio = choice.ratio.to_f64()?;
+pub fn best_in_words(project: &Project, array: &ArrayDesign) -> Option<String> {
+    let curve = delay_curve(project, array)?;
+    let ratio = array.ratio.to_f64()?;
     let here =
         curve.points.iter().min_by(|a, b| (a.ratio - ratio).abs().total_cmp(&(b.ratio - ratio).abs()))?;
     let (rear, rdf) = (&curve.best_rear, &curve.best_rdf);
     Some(format!(
-        "{array}: delay {} gives RDF {:.1} dB, worst rear lobe {:.1} dB; \"best-rear\" would be {:.2} (RDF {:.1} dB, rear {:.1} dB, \
+        "{}: delay {} gives RDF {:.1} dB, worst rear lobe {:.1} dB; \"best-rear\" would be {:.2} (RDF {:.1} dB, rear {:.1} dB, \
          as good within {:.2} to {:.2}), \"best-rdf\" {:.2} (RDF {:.1} dB, rear {:.1} dB)",
-        choice.ratio.normalize(),
+        array.plan.name,
+        array.ratio.normalize(),
         here.rdf_db,
         here.worst_rear_db,
         rear.ratio,

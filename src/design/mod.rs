@@ -12,12 +12,12 @@ mod settle;
 
 use rust_decimal::Decimal;
 
-pub use delay::best_in_words;
+pub use delay::{best_in_words, delay_curve};
 pub use settle::{Settled, code, settle};
 
 use crate::plan::{ArrayPlan, Cables, LineLength};
 use crate::project::ArraySpec;
-use crate::radio::{DelayCurve, Soil};
+use crate::radio::Soil;
 use crate::reception::{Ends, NoiseSite, Subject, Trim, Weighting};
 use crate::units::Length;
 
@@ -47,8 +47,8 @@ pub struct ArrayDesign {
     pub trims: Vec<Option<Trim>>,
     /// The cables chosen.
     pub cables: Cables,
-    /// The delay, and how it was found.
-    pub delay: DelayChoice,
+    /// The delay line's electrical length over the row step, given or found.
+    pub ratio: Decimal,
     /// How the longest bay came about.
     pub bay_reason: String,
     /// Why the hub has or has not an amplifier.
@@ -59,15 +59,6 @@ pub struct ArrayDesign {
     pub ends: Ends,
     /// External noise and what the catalogue has against it.
     pub noise: NoiseSite,
-}
-
-/// The delay line's electrical length over the row step, and how it was found.
-#[derive(Clone, Debug)]
-pub struct DelayChoice {
-    /// The ratio used.
-    pub ratio: Decimal,
-    /// What each ratio from 0.4 to 1.0 would give at the design frequency; nothing for arrays without such a delay.
-    pub curve: Option<DelayCurve>,
 }
 
 impl ArrayDesign {

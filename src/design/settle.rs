@@ -102,10 +102,11 @@ fn settle_array(
         main_cost: LineCost { leg: 1.0, onward: 1.0 },
         amplifier: HubAmplifier::Absent,
     };
-    let delay = delay::choose(project, spec, &context);
-    direction::check(project, spec, delay.ratio, problems);
+    let sketch = arrays::expand(spec, Decimal::ONE, &context, &mut Names::default());
+    let ratio = delay::choose(project, spec, &sketch.layout);
+    direction::check(project, spec, ratio, problems);
     let draw = |context: &Context, names: &mut Names, cables: Cables| {
-        let plan = arrays::expand(spec, delay.ratio, context, names);
+        let plan = arrays::expand(spec, ratio, context, names);
         let allowances = Allowances { practice: &project.practice, route_factor: bench.route_factor };
         let lengths = measure(&plan.layout, &plan.feed, &allowances, |role| cables.of(role).velocity);
         ArrayDesign {
@@ -115,7 +116,7 @@ fn settle_array(
             plan,
             lengths,
             cables,
-            delay: delay.clone(),
+            ratio,
             bay_reason: bay_reason.clone(),
             amplifier_reason: String::new(),
             soil: reception::soil(project.site.ground),

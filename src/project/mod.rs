@@ -9,6 +9,7 @@ mod desk;
 mod element;
 mod feed;
 mod labour;
+mod choice;
 pub mod model;
 mod on_hand;
 mod phasing;

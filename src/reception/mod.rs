@@ -15,4 +15,4 @@ pub use report::{
     report_noise,
 };
 pub use tolerance::{Trim, TrimBasis, level_limit_db, tolerances, trim};
-pub use weight::{LineFigures, built, designed, line_figures, path_loss_db};
+pub use weight::{LineFigures, built, complex, designed, line_figures, path_loss_db};

@@ -5,7 +5,7 @@ use num_complex::Complex64;
 use super::element::{self, Ends};
 use super::noise::{self, Noise, NoiseSite};
 use super::weight::{built, designed, line_figures};
-use crate::plan::{ArrayPlan, Cables, ElementKind, LineLength, State};
+use crate::plan::{ArrayPlan, Cables, ElementKind, Layout, LineLength, State};
 use crate::radio::{self, DelayCurve, ErrorSize, PatternReport, RadioElement, RadioError, Response, Soil};
 use crate::units::{Angle, Bearing, Frequency};
 
@@ -180,13 +180,13 @@ fn lossless_notes(
 /// # Errors
 /// When the array cannot be computed.
 pub fn delay_curve(
-    plan: &ArrayPlan,
+    layout: &Layout,
     soil: Soil,
     ends: Ends,
     frequency: Frequency,
     weights_at: impl Fn(f64) -> Vec<Complex64>,
 ) -> Result<DelayCurve, RadioError> {
-    let response = Response::new(&element::elements(&plan.layout, ends), soil, frequency)?;
+    let response = Response::new(&element::elements(layout, ends), soil, frequency)?;
     Ok(radio::delay_curve(&response, weights_at))
 }
 

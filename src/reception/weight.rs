@@ -2,16 +2,20 @@
 
 use num_complex::Complex64;
 
-use crate::plan::{ArrayPlan, Cables, FeedTree, LineId, LineLength, LineRole, Node, RoleId, State};
+use crate::plan::{
+    ArrayPlan, Cables, DesignWeight, FeedTree, LineId, LineLength, LineRole, Node, RoleId, State,
+};
 use crate::radio::delay_factor;
 use crate::units::Frequency;
 
 /// The weights that the elements are meant to have: amplitudes, inversions and delays as designed, nothing lost.
 pub fn designed(plan: &ArrayPlan, frequency: Frequency) -> Vec<Complex64> {
-    plan.design
-        .iter()
-        .map(|weight| Complex64::from_polar(weight.amplitude, weight.phase(frequency)))
-        .collect()
+    complex(&plan.design, frequency)
+}
+
+/// Design weights as complex numbers.
+pub fn complex(weights: &[DesignWeight], frequency: Frequency) -> Vec<Complex64> {
+    weights.iter().map(|weight| Complex64::from_polar(weight.amplitude, weight.phase(frequency))).collect()
 }
 
 /// What a line does to a signal at one frequency.
