@@ -12,6 +12,7 @@
 //! inputs. Only `cli` knows files, the terminal and the command line.
 
 pub mod units;
+pub mod physics;
 pub mod problem;
 pub mod radio;
 pub mod catalogue;
