@@ -44,6 +44,17 @@ pub struct Context {
     pub main_cost: LineCost,
     /// Whether the outermost hub has an amplifier.
     pub amplifier: HubAmplifier,
+    /// A pad that balances a delay line's loss, if one is needed.
+    pub balance: Option<Balance>,
+}
+
+/// A pad in the undelayed leg of a pair.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Balance {
+    /// Its loss in dB.
+    pub db: f64,
+    /// Why it is needed.
+    pub why: String,
 }
 
 /// Whether the outermost hub has an amplifier.
@@ -123,7 +134,10 @@ pub fn design_weights(spec: &ArraySpec, ratio: Decimal, design: Frequency) -> Ve
 
 /// Expands one array into its layout and feed tree.
 pub fn expand(spec: &ArraySpec, ratio: Decimal, context: &Context, names: &mut Names) -> ArrayPlan {
-    let (inner, outer) = stages(spec, ratio, context.design);
+    let (mut inner, outer) = stages(spec, ratio, context.design);
+    if let (Some(stage), Some(balance)) = (&mut inner, &context.balance) {
+        stage.recipe = stage.recipe.clone().balanced(balance.db, &balance.why);
+    }
     let design = design_weights(spec, ratio, context.design);
     compose::compose(spec, inner.as_ref(), outer.as_ref(), design, context, names)
 }

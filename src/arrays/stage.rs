@@ -84,6 +84,29 @@ impl Recipe {
         Self::Invert(Box::new(of))
     }
 
+    /// Puts a pad into the one leg of a pair that has no delay; anything else stays as it is.
+    #[must_use]
+    pub fn balanced(self, db: f64, why: &str) -> Self {
+        match self {
+            Self::Combine(mut legs) if legs.len() == 2 && legs[0].is_delayed() != legs[1].is_delayed() => {
+                let plain = usize::from(legs[0].is_delayed());
+                let of = Box::new(legs.remove(plain));
+                legs.insert(plain, Self::Pad { db, why: why.to_owned(), of });
+                Self::Combine(legs)
+            }
+            other => other,
+        }
+    }
+
+    fn is_delayed(&self) -> bool {
+        match self {
+            Self::Seat(_) => false,
+            Self::Delay { .. } => true,
+            Self::Invert(of) | Self::Pad { of, .. } => of.is_delayed(),
+            Self::Combine(of) => of.iter().any(Self::is_delayed),
+        }
+    }
+
     /// Equal in-phase combining of any number of inputs: 3-way hybrids nearest the elements, then 2-way ones, which
     /// takes the fewest boxes. A number that is not 2^a·3^b ends in one combiner that nobody builds; the takeoff says so.
     pub fn combined(mut inputs: Vec<Self>) -> Self {

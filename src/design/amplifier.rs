@@ -5,21 +5,17 @@ use rust_decimal::prelude::ToPrimitive;
 use super::ArrayDesign;
 use crate::arrays::HubAmplifier;
 use crate::catalogue::{Catalogue, Part};
+use crate::physics::noise::{AmplifierNeed, Stage, amplifier_need};
 use crate::project::{AmplifierChoice, Project};
-use crate::reception::{self, AmplifierFigures, NoiseSite, Weighting};
+use crate::reception::{self, NoiseSite, Weighting};
 use crate::units::Decibel;
-
-/// Above this the floor rises audibly and `"auto"` fits an amplifier (house rule).
-const FITTED_ABOVE_DB: f64 = 3.0;
-/// Below this an amplifier buys nothing (house rule).
-const NEEDLESS_BELOW_DB: f64 = 1.0;
 
 /// External noise, the receiver, and what the catalogue has against it.
 pub(super) fn noise_site(project: &Project, catalogue: &Catalogue) -> NoiseSite {
     let amplifier = |element: &str| {
         let part =
             catalogue.default_part_with("amplifier", |part| part.attribute("element") == Some(element))?;
-        Some(AmplifierFigures { noise_figure: decibels(part, "nf_db")?, gain: decibels(part, "gain_db")? })
+        Some(Stage { noise_figure: decibels(part, "nf_db")?, gain: decibels(part, "gain_db")? })
     };
     let coil = catalogue.default_part("loading-coil");
     NoiseSite {
@@ -62,17 +58,17 @@ fn automatic(project: &Project, design: &ArrayDesign) -> (HubAmplifier, String) 
         noise.external.db(),
         noise.average_gain.db()
     );
-    match noise.with_amplifier {
-        Some(with) if without > FITTED_ABOVE_DB => {
+    match (amplifier_need(noise.degradation), noise.with_amplifier) {
+        (AmplifierNeed::Yes, Some(with)) => {
             (HubAmplifier::Fitted, format!("{budget}, with a hub amplifier by {:.2} dB: fitted", with.db()))
         }
-        None if without > FITTED_ABOVE_DB => (
+        (AmplifierNeed::Yes, None) => (
             HubAmplifier::Absent,
-            format!("{budget}; the catalogue has no hub amplifier with nf_db and gain_db"),
+            format!("{budget}: an amplifier is needed, but the catalogue has none with nf_db and gain_db"),
         ),
-        Some(_) | None if without > NEEDLESS_BELOW_DB => {
+        (AmplifierNeed::Optional, _) => {
             (HubAmplifier::Absent, format!("{budget}: an amplifier is optional, none is fitted"))
         }
-        Some(_) | None => (HubAmplifier::Absent, format!("{budget}: none is needed")),
+        (AmplifierNeed::No, _) => (HubAmplifier::Absent, format!("{budget}: none is needed")),
     }
 }

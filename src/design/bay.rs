@@ -3,6 +3,8 @@
 use rust_decimal::prelude::ToPrimitive;
 
 use crate::catalogue::{Cable, Catalogue};
+use crate::physics::GRAVITY;
+use crate::physics::sag::longest_bay_m;
 use crate::project::{ArraySpec, ElementSpec, Project};
 use crate::units::{Diameter, Length};
 
@@ -16,11 +18,8 @@ pub(super) fn wire_diameter(catalogue: &Catalogue) -> Diameter {
     wire_data(catalogue).and_then(|cable| cable.diameter).unwrap_or(Diameter::from_um(1_600))
 }
 
-/// Longest bay b = √(8·H·f/w) and the words for it: tension H, sag f, weight w a metre.
-///
-/// Source: parabola approximation of the catenary, from memory. The weight is the wire part's, else copper of 8960 kg/m³.
+/// Longest bay and the words for it. The weight is the wire part's, else copper of 8960 kg/m³.
 pub(super) fn longest(project: &Project, catalogue: &Catalogue, spec: &ArraySpec) -> (Length, String) {
-    const STANDARD_GRAVITY: f64 = 9.806_65;
     const COPPER_KG_PER_M3: f64 = 8_960.0;
     if let Some(bay) = project.practice.max_bay {
         return (bay, format!("longest bay {bay} as given"));
@@ -33,10 +32,10 @@ pub(super) fn longest(project: &Project, catalogue: &Catalogue, spec: &ArraySpec
     let listed = listed.and_then(|cable| cable.mass_kg_per_km).and_then(|mass| mass.to_f64());
     let radius = own.unwrap_or_else(|| wire_diameter(catalogue)).metres() / 2.0;
     let solid = std::f64::consts::PI * radius * radius * COPPER_KG_PER_M3;
-    let weight = listed.map_or(solid, |kg_per_km| kg_per_km / 1000.0) * STANDARD_GRAVITY;
-    let tension = project.practice.wire_tension.newtons();
+    let weight = listed.map_or(solid, |kg_per_km| kg_per_km / 1000.0) * GRAVITY;
+    let tension = project.practice.wire_tension;
     let sag = project.practice.max_sag;
-    let metres = (8.0 * tension * sag.metres() / weight).sqrt();
+    let metres = longest_bay_m(weight, tension, sag.metres());
     let bay = Length::from_mm(Length::from_metres_nearest(metres).mm().max(1));
-    (bay, format!("longest bay √(8 × {tension} N × {sag} sag / {weight:.3} N/m) = {bay}"))
+    (bay, format!("longest bay √(8 × {tension} × {sag} sag / {weight:.3} N/m) = {bay}"))
 }

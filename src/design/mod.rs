@@ -4,15 +4,19 @@
 //! test frequency. Everything after this module reads a [`Design`] and makes no choice of its own.
 
 mod amplifier;
+mod balance;
 mod bay;
 mod delay;
 mod direction;
+mod earth;
 mod land;
 mod settle;
+mod termination;
 
 use rust_decimal::Decimal;
 
 pub use delay::{best_in_words, delay_curve};
+pub use earth::{EarthSize, earth_size, longest_radial, rod_length, set_ohms};
 pub use settle::{Settled, code, settle};
 
 use crate::plan::{ArrayPlan, Cables, LineLength};
@@ -57,6 +61,8 @@ pub struct ArrayDesign {
     pub soil: Soil,
     /// How the far ends of wires are built.
     pub ends: Ends,
+    /// What stands in the termination boxes, and why; empty without wires.
+    pub termination_reason: String,
     /// External noise and what the catalogue has against it.
     pub noise: NoiseSite,
 }

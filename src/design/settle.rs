@@ -3,13 +3,13 @@
 use rust_decimal::Decimal;
 use rust_decimal::prelude::ToPrimitive;
 
-use super::{ArrayDesign, Design, amplifier, bay, delay, direction, land};
+use super::{ArrayDesign, Design, amplifier, balance, bay, delay, direction, land, termination};
 use crate::arrays::{self, Context, HubAmplifier, LineCost, Names};
 use crate::catalogue::Catalogue;
 use crate::plan::{Allowances, Cables, LineRole, choose_cables, measure};
 use crate::problem::{Problem, Problems};
 use crate::project::{ArraySpec, Project, Terrain};
-use crate::reception::{self, Ends, Weighting};
+use crate::reception::{self, Weighting};
 
 /// Codes of problems found while settling a design.
 pub mod code {
@@ -28,6 +28,8 @@ pub mod code {
         IN_KEEP_OUT = "in-keep-out";
         /// Given radials would touch those of the next element.
         RADIALS_TOUCH = "radials-touch";
+        /// An earth set above 150 ohm.
+        POOR_EARTH = "poor-earth";
         /// The trim allowance is smaller than the cable's own spread.
         TRIM_TIGHT = "trim-tight";
     }
@@ -101,10 +103,12 @@ fn settle_array(
         branch_cost: LineCost { leg: 1.0, onward: 1.0 },
         main_cost: LineCost { leg: 1.0, onward: 1.0 },
         amplifier: HubAmplifier::Absent,
+        balance: None,
     };
     let sketch = arrays::expand(spec, Decimal::ONE, &context, &mut Names::default());
     let ratio = delay::choose(project, spec, &sketch.layout);
     direction::check(project, spec, ratio, problems);
+    let far_end = termination::choose(project, bench.catalogue, spec, &sketch.layout, problems);
     let draw = |context: &Context, names: &mut Names, cables: Cables| {
         let plan = arrays::expand(spec, ratio, context, names);
         let allowances = Allowances { practice: &project.practice, route_factor: bench.route_factor };
@@ -120,11 +124,13 @@ fn settle_array(
             bay_reason: bay_reason.clone(),
             amplifier_reason: String::new(),
             soil: reception::soil(project.site.ground),
-            ends: Ends::Matched,
+            ends: far_end.ends,
+            termination_reason: far_end.reason.clone(),
             noise: amplifier::noise_site(project, bench.catalogue),
         }
     };
     let bare = draw(&context, &mut Names::default(), cables.clone());
+    context.balance = balance::needed(project, &bare);
     let (fitted, amplifier_reason) = amplifier::decide(project, &bare);
     context.amplifier = fitted;
     let mut design = draw(&context, names, cables);

@@ -14,6 +14,7 @@ pub mod matching;
 pub mod noise;
 pub mod pad;
 pub mod phasing;
+pub mod preferred;
 pub mod sag;
 pub mod skin;
 pub mod transformer;

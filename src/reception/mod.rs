@@ -9,10 +9,10 @@ pub mod tolerance;
 pub mod weight;
 
 pub use element::{Ends, elements, soil};
-pub use noise::{AmplifierFigures, Noise, NoiseSite};
+pub use noise::{Noise, NoiseSite};
 pub use report::{
     ArrayReport, DirectionReport, Figures, FrequencyReport, Subject, Weighting, delay_curve, report,
-    report_noise,
+    report_noise, weights,
 };
 pub use tolerance::{Trim, TrimBasis, level_limit_db, tolerances, trim};
 pub use weight::{LineFigures, built, complex, designed, line_figures, path_loss_db};

@@ -4,6 +4,7 @@ use num_complex::Complex64;
 
 use super::report::Subject;
 use super::weight::{LineFigures, path_loss_db};
+use crate::physics::noise::{SiteNoise, Stage, cascade_factor};
 use crate::plan::ElementKind;
 use crate::project::{NoiseClass, VerticalKind};
 use crate::radio::{self, Response};
@@ -17,20 +18,11 @@ pub struct NoiseSite {
     /// The receiver's noise figure.
     pub receiver: Decibel,
     /// Noise figure and gain of a hub amplifier, if the catalogue has one.
-    pub hub_amplifier: Option<AmplifierFigures>,
+    pub hub_amplifier: Option<Stage>,
     /// Noise figure and gain of the amplifier of an active vertical, if the catalogue has one.
-    pub element_amplifier: Option<AmplifierFigures>,
+    pub element_amplifier: Option<Stage>,
     /// Gain of a passive vertical's element part, if the catalogue says.
     pub passive_gain: Option<Decibel>,
-}
-
-/// Noise figure and gain of an amplifier.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct AmplifierFigures {
-    /// Noise figure.
-    pub noise_figure: Decibel,
-    /// Gain.
-    pub gain: Decibel,
 }
 
 /// The noise budget of one direction at one frequency.
@@ -57,13 +49,13 @@ pub fn budget(
     frequency: Frequency,
 ) -> Option<Noise> {
     let site = subject.noise;
-    let external = man_made(site.class, frequency);
+    let external = site_noise(site.class).median(frequency);
     let main_loss = Decibel::new(path_loss_db(&subject.plan.feed, lines).unwrap_or_default());
-    let behind = cascade(&[passive(main_loss), receiver(site.receiver)]);
+    let behind = cascade_factor(&[Stage::passive(main_loss), Stage::receiver(site.receiver)]);
     let (gain, ahead) = average_gain(subject, response, weights)?;
     let without = degradation(external, gain, ahead, behind);
     let with = site.hub_amplifier.map(|amplifier| {
-        let behind = cascade(&[amplifier, passive(main_loss), receiver(site.receiver)]);
+        let behind = cascade_factor(&[amplifier, Stage::passive(main_loss), Stage::receiver(site.receiver)]);
         degradation(external, gain, ahead, behind)
     });
     Some(Noise {
@@ -74,41 +66,22 @@ pub fn budget(
     })
 }
 
-/// Man-made noise Fa = c − d·lg f (MHz). Source: ITU-R P.372, constants from memory.
-pub fn man_made(class: NoiseClass, frequency: Frequency) -> Decibel {
-    let (c, d) = match class {
-        NoiseClass::City => (76.8, 27.7),
-        NoiseClass::Residential => (72.5, 27.7),
-        NoiseClass::Rural => (67.2, 27.7),
-        NoiseClass::QuietRural => (53.6, 28.6),
-    };
-    Decibel::new(c - d * frequency.mhz().log10())
+/// The man-made noise class of a site.
+const fn site_noise(class: NoiseClass) -> SiteNoise {
+    match class {
+        NoiseClass::City => SiteNoise::City,
+        NoiseClass::Residential => SiteNoise::Residential,
+        NoiseClass::Rural => SiteNoise::Rural,
+        NoiseClass::QuietRural => SiteNoise::QuietRural,
+    }
 }
 
 fn linear(db: Decibel) -> f64 {
     10_f64.powf(db.db() / 10.0)
 }
 
-fn passive(loss: Decibel) -> AmplifierFigures {
-    AmplifierFigures { noise_figure: loss, gain: Decibel::new(-loss.db()) }
-}
-
-fn receiver(noise_figure: Decibel) -> AmplifierFigures {
-    AmplifierFigures { noise_figure, gain: Decibel::new(0.0) }
-}
-
-/// Friis: f = f₁ + (f₂ − 1)/g₁ + …, linear. Source: Friis, "Noise Figures of Radio Receivers", 1944 (from memory).
-fn cascade(stages: &[AmplifierFigures]) -> f64 {
-    let mut factor = 1.0;
-    let mut gain = 1.0;
-    for stage in stages {
-        factor += (linear(stage.noise_figure) - 1.0) / gain;
-        gain *= linear(stage.gain);
-    }
-    factor
-}
-
-/// `ahead` is noise that the elements' own amplifiers add before combining, over fa at the output (0 for passive ones).
+/// `ahead` is noise that the elements' own amplifiers add before combining, over the external noise at the output (0 for
+/// passive ones); with it 0 this is `physics::noise::degradation`.
 fn degradation(external: Decibel, gain: f64, ahead: f64, behind: f64) -> Decibel {
     let outside = linear(external) * gain;
     Decibel::new(10.0 * ((outside * (1.0 + ahead) + behind - gain) / outside).log10())
@@ -131,7 +104,7 @@ fn average_gain(subject: &Subject<'_>, response: &Response, weights: &[Complex64
                 VerticalKind::Active => {
                     let amplifier = subject.noise.element_amplifier?;
                     let own: f64 = weights.iter().map(Complex64::norm_sqr).sum();
-                    let external = linear(man_made(subject.noise.class, response.frequency()));
+                    let external = linear(site_noise(subject.noise.class).median(response.frequency()));
                     let added = linear(amplifier.noise_figure) - 1.0;
                     Some((linear(amplifier.gain) * over_one, added * own / (external * over_one)))
                 }

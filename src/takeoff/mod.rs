@@ -5,7 +5,7 @@
 
 mod coax;
 pub mod control;
-pub mod earth;
+mod earth;
 pub mod hub;
 pub mod model;
 mod spare;
@@ -45,8 +45,8 @@ pub fn take_off(project: &Project, catalogue: &Catalogue, design: &Design) -> Ta
 
 fn take_off_array(tally: &mut Tally<'_>, scene: &Scene<'_>, index: usize, array: &ArrayDesign) {
     wire::take_off(tally, scene, array);
-    vertical::take_off(tally, scene, array);
-    support::take_off(tally, scene, array);
+    vertical::take_off(tally, array);
+    support::take_off(tally, array);
     earth::take_off(tally, scene, array);
     coax::take_off(tally, scene, index, array);
     hub::take_off(tally, array);

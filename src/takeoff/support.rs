@@ -1,13 +1,13 @@
 //! What holds wires up: posts or trees, insulators, backstays, boxes at the ends.
 
+use super::ArrayDesign;
 use super::tally::{Tally, Want};
-use super::{ArrayDesign, Scene};
 use crate::plan::layout::Support;
 use crate::plan::{Fixture, Point};
 use crate::project::Supports;
 
 /// Counts the fixtures of wires, point by point.
-pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>, array: &ArrayDesign) {
+pub(super) fn take_off(tally: &mut Tally<'_>, array: &ArrayDesign) {
     let z0 = coax_impedance(array);
     for point in &array.plan.layout.points {
         for fixture in &point.fixtures {
@@ -20,7 +20,8 @@ pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>, array: &ArrayDe
                     surge(tally, point);
                 }
                 Fixture::TerminationBox => {
-                    let why = termination_in_words(scene, array);
+                    let why =
+                        format!("termination box at the far end of a wire: {}", array.termination_reason);
                     tally.add("termination-box", &Want::any(), &point.name, 1, &why);
                     surge(tally, point);
                 }
@@ -36,10 +37,6 @@ pub(super) fn coax_impedance(array: &ArrayDesign) -> String {
     let role = cable.map_or(crate::plan::LineRole::Main, |line| array.plan.feed.line(line).role);
     let data = array.cables.of(role).data.as_ref();
     data.and_then(|cable| cable.z0_ohm).map_or_else(|| "75".to_owned(), |z0| z0.normalize().to_string())
-}
-
-fn termination_in_words(_scene: &Scene<'_>, _array: &ArrayDesign) -> String {
-    "termination box at the far end of a one-direction wire".to_owned()
 }
 
 fn surge(tally: &mut Tally<'_>, point: &Point) {

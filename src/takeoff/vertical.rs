@@ -1,7 +1,7 @@
 //! Short verticals: mast, base, box, amplifier or coil, guys.
 
+use super::ArrayDesign;
 use super::tally::{Tally, Want};
-use super::{ArrayDesign, Scene};
 use crate::plan::{Fixture, MastFoot, Point};
 use crate::project::VerticalKind;
 use crate::units::Length;
@@ -10,7 +10,7 @@ use crate::units::Length;
 const GUYED_ABOVE: Length = Length::from_mm(6_000);
 
 /// Counts what stands at every vertical.
-pub(super) fn take_off(tally: &mut Tally<'_>, _scene: &Scene<'_>, array: &ArrayDesign) {
+pub(super) fn take_off(tally: &mut Tally<'_>, array: &ArrayDesign) {
     let z0 = super::support::coax_impedance(array);
     for point in &array.plan.layout.points {
         for fixture in &point.fixtures {
