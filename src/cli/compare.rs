@@ -26,8 +26,9 @@ impl Compare {
     pub(super) fn run(&self) -> Result<Outcome, Failure> {
         let work = self.gather()?;
         output::problems(&work.problems);
-        let rows = report::compare::rows(&work.project, &work.results);
-        let sheet = report::compare::sheet(&work.project, &work.results, &rows);
+        let heard = work.heard();
+        let rows = report::compare::rows(&work.project, &work.results, &heard);
+        let sheet = report::compare::sheet(&work.project, &work.results, &heard, &rows);
         let json = report::compare::document_of(&work.hash, &work.project, &work.results, &rows);
         output::result(self.format, &sheet, &json)?;
         Ok(work.outcome())

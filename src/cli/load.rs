@@ -13,6 +13,7 @@ use crate::design;
 use crate::pricing;
 use crate::problem::Problems;
 use crate::project::{self, Project};
+use crate::reception::{self, ArrayReport, Weighting};
 use crate::report::OptionResult;
 use crate::takeoff;
 
@@ -38,6 +39,14 @@ impl Work {
         } else {
             Outcome::Unpriced
         }
+    }
+
+    /// The pattern reports of each option's arrays, with the weights that the parts produce.
+    pub(super) fn heard(&self) -> Vec<Vec<ArrayReport>> {
+        let frequencies = self.project.frequencies();
+        let of =
+            |array: &design::ArrayDesign| reception::report(&array.subject(Weighting::Built), &frequencies);
+        self.results.iter().map(|result| result.design.arrays.iter().map(of).collect()).collect()
     }
 
     /// What must be said beside any price.

@@ -9,7 +9,10 @@ use super::parts::{coax_cut, cut_of};
 use super::sheet::{Sheet, Table};
 use crate::plan::PointKind;
 use crate::project::Project;
+use crate::radio::FRONT_TO_BACK_CEILING_DB;
+use crate::reception::{ArrayReport, Figures};
 use crate::takeoff::PieceRole;
+use crate::units::{Frequency, Money};
 
 /// Margin of the land around posts, wires and boxes, metres (common practice, no source).
 const MARGIN_M: f64 = 5.0;
@@ -32,6 +35,13 @@ pub enum Cell {
     Number(Decimal),
     /// Money, exact text.
     Money(String),
+    /// A number above which only "more than" is honest.
+    Ceiling {
+        /// As computed.
+        value: Decimal,
+        /// What is shown is "> ceiling" when the value is above it.
+        ceiling: Decimal,
+    },
     /// Not computed.
     None,
 }
@@ -40,6 +50,7 @@ impl Cell {
     fn json(&self) -> Value {
         match self {
             Self::Number(value) => number(*value),
+            Self::Ceiling { value, .. } => number(*value),
             Self::Money(text) => json!(text),
             Self::None => Value::Null,
         }
@@ -48,6 +59,8 @@ impl Cell {
     fn text(&self) -> String {
         match self {
             Self::Number(value) => value.normalize().to_string(),
+            Self::Ceiling { value, ceiling } if value > ceiling => format!("> {ceiling}"),
+            Self::Ceiling { value, .. } => value.normalize().to_string(),
             Self::Money(text) => text.clone(),
             Self::None => "–".to_owned(),
         }
@@ -74,11 +87,72 @@ pub fn land(result: &OptionResult) -> (Decimal, Decimal) {
     (side(0), side(1))
 }
 
-/// Every row that bill, takeoff and layout can fill.
-pub fn rows(project: &Project, results: &[OptionResult]) -> Vec<Row> {
+/// Every row: money, what it hears, quantities. `heard` has the pattern reports of each option's arrays, in the same order.
+pub fn rows(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayReport>]) -> Vec<Row> {
     let mut rows = money_rows(project, results);
+    rows.extend(radio_rows(project, results, heard));
     rows.extend(quantity_rows(results));
     rows
+}
+
+/// The figures of an option's first array in its first direction at one frequency.
+fn figures(reports: &[ArrayReport], frequency: Frequency) -> Option<&Figures> {
+    let direction = reports.first()?.directions.first()?;
+    direction.frequencies.iter().find(|report| report.frequency == frequency)?.figures.as_ref().ok()
+}
+
+/// Directivity, rear, beamwidth and signal of each option's first array, and what a dB costs above the cheapest.
+fn radio_rows(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayReport>]) -> Vec<Row> {
+    let mut rows = Vec::new();
+    for frequency in project.frequencies() {
+        let mut row = |name: &str, unit: &str, value: &dyn Fn(&Figures) -> Cell| {
+            let cell = |reports: &Vec<ArrayReport>| figures(reports, frequency).map_or(Cell::None, value);
+            let values = heard.iter().map(cell).collect();
+            rows.push(Row { name: format!("{name} at {frequency}"), unit: unit.to_owned(), values });
+        };
+        row("RDF at its peak", "dB", &|f| tenth(f.report.directivity.rdf_db));
+        row("elevation of the peak", "deg", &|f| tenth(f.report.directivity.peak_elevation_deg));
+        row("RDF at 20° elevation", "dB", &|f| {
+            let at = f.report.directivity.at.iter().find(|at| (at.elevation_deg - 20.0).abs() < 0.5);
+            at.map_or(Cell::None, |at| tenth(at.rdf_db))
+        });
+        row("front to back", "dB", &|f| Cell::Ceiling {
+            value: tenths(f.report.directivity.front_to_back_db),
+            ceiling: tenths(FRONT_TO_BACK_CEILING_DB),
+        });
+        row("worst rear lobe", "dB", &|f| tenth(f.report.directivity.worst_rear.level_db));
+        row("beamwidth", "deg", &|f| tenth(f.report.directivity.beamwidth_deg));
+        row("signal over one element", "dB", &|f| tenth(f.report.directivity.gain_rel_db));
+        row("RDF that nine in ten builds reach", "dB", &|f| tenth(f.report.spread.rdf_db.p10));
+    }
+    rows.push(cost_per_decibel(project, results, heard));
+    rows
+}
+
+fn tenths(value: f64) -> Decimal {
+    Decimal::from_f64_retain(value).unwrap_or_default().round_dp(1)
+}
+
+fn tenth(value: f64) -> Cell {
+    if value.is_finite() { Cell::Number(tenths(value)) } else { Cell::None }
+}
+
+/// Money for each dB of RDF above the cheapest option; nothing where an option hears no better.
+fn cost_per_decibel(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayReport>]) -> Row {
+    let rdf = |n: usize| figures(&heard[n], project.frequency).map(|f| tenths(f.report.directivity.rdf_db));
+    let cheapest = (0..results.len()).min_by_key(|n| results[*n].bill.total);
+    let value = |n: usize| {
+        let base = cheapest?;
+        let better = rdf(n)? - rdf(base)?;
+        let dearer = results[n].bill.total - results[base].bill.total;
+        (n != base && better > Decimal::ZERO)
+            .then(|| Cell::Money(Money::new(dearer.amount() / better).rounded(&project.currency).to_string()))
+    };
+    Row {
+        name: format!("cost of a dB of RDF above the cheapest, at {}", project.frequency),
+        unit: format!("{}/dB", project.currency),
+        values: (0..results.len()).map(|n| value(n).unwrap_or(Cell::None)).collect(),
+    }
 }
 
 fn money_rows(project: &Project, results: &[OptionResult]) -> Vec<Row> {
@@ -154,8 +228,8 @@ pub fn document_of(hash: &str, project: &Project, results: &[OptionResult], rows
 }
 
 /// The comparison for people: who is cheaper and by how much, then the table.
-pub fn sheet(project: &Project, results: &[OptionResult], rows: &[Row]) -> Sheet {
-    let mut sheet = Sheet { answer: answer(project, results), ..Sheet::default() };
+pub fn sheet(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayReport>], rows: &[Row]) -> Sheet {
+    let mut sheet = Sheet { answer: answer(project, results, heard), ..Sheet::default() };
     let heads: Vec<String> = ["what", "unit"]
         .iter()
         .map(|s| (*s).to_owned())
@@ -168,11 +242,20 @@ pub fn sheet(project: &Project, results: &[OptionResult], rows: &[Row]) -> Sheet
         table.rows.push([row.name.clone(), row.unit.clone()].into_iter().chain(cells).collect());
     }
     sheet.tables.push(table);
+    if results.iter().any(|result| result.design.arrays.len() > 1) {
+        sheet
+            .notes
+            .push("an option with several arrays is judged by its first; `pattern` has them all".to_owned());
+    }
+    sheet.notes.push(
+        "RDF takes noise as equal from all sky directions; a front to back above 25 dB is beyond any model of real ground"
+            .to_owned(),
+    );
     sheet.notes.push(super::estimate::NO_LABOUR.to_owned());
     sheet
 }
 
-fn answer(project: &Project, results: &[OptionResult]) -> Vec<String> {
+fn answer(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayReport>]) -> Vec<String> {
     let currency = &project.currency;
     let incomplete: Vec<&OptionResult> = results.iter().filter(|r| !r.bill.unpriced.is_empty()).collect();
     if !incomplete.is_empty() {
@@ -204,16 +287,47 @@ fn answer(project: &Project, results: &[OptionResult]) -> Vec<String> {
                 first.bill.total,
                 others.join(", ")
             )];
-            let ((a, b), (c, d)) = (land(first), land(rest[0]));
-            let hectares = |area: Decimal| (area / Decimal::from(10_000)).round_dp(2);
+            let hectares = |result: &OptionResult| {
+                let (length, width) = land(result);
+                (length * width / Decimal::from(10_000)).round_dp(2)
+            };
+            let second = rest[0];
             lines.push(format!(
-                "{} takes {} ha, {} takes {} ha",
+                "{} takes {} ha of land, {} takes {} ha",
                 first.name(),
-                hectares(a * b),
-                rest[0].name(),
-                hectares(c * d)
+                hectares(first),
+                second.name(),
+                hectares(second)
             ));
+            lines.extend(heard_in_words(project, results, heard, (first, second)));
             lines
         }
     }
+}
+
+/// "echelon hears 0.9 dB less sharply, its worst rear lobe is 7.1 dB weaker": the two cheapest options at the design frequency.
+fn heard_in_words(
+    project: &Project,
+    results: &[OptionResult],
+    heard: &[Vec<ArrayReport>],
+    (first, second): (&OptionResult, &OptionResult),
+) -> Option<String> {
+    let of = |wanted: &OptionResult| {
+        let index = results.iter().position(|result| std::ptr::eq(result, wanted))?;
+        figures(&heard[index], project.frequency)
+    };
+    let (a, b) = (&of(first)?.report, &of(second)?.report);
+    let sharper = tenths(a.directivity.rdf_db - b.directivity.rdf_db);
+    let louder = tenths(a.directivity.worst_rear.level_db - b.directivity.worst_rear.level_db);
+    let rdf = match sharper {
+        d if d.is_zero() => "hears as sharply".to_owned(),
+        d if d > Decimal::ZERO => format!("hears {d} dB more sharply (RDF)"),
+        d => format!("hears {} dB less sharply (RDF)", d.abs()),
+    };
+    let rear = match louder {
+        d if d.is_zero() => "its worst rear lobe is the same".to_owned(),
+        d if d > Decimal::ZERO => format!("its worst rear lobe is {d} dB stronger"),
+        d => format!("its worst rear lobe is {} dB weaker", d.abs()),
+    };
+    Some(format!("at {} {} {rdf}, {rear}", project.frequency, first.name()))
 }

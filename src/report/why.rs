@@ -3,7 +3,7 @@
 use super::OptionResult;
 use super::sheet::Sheet;
 use crate::pricing::BillLine;
-use crate::takeoff::{Item, Piece};
+use crate::takeoff::{Item, Piece, PieceElectrical};
 
 /// What the results say of a label, role, part or offer; nothing when none of them has it.
 pub fn explain(results: &[OptionResult], label: &str) -> Option<Sheet> {
@@ -64,6 +64,9 @@ fn explain_piece(sheet: &mut Sheet, piece: &Piece) {
             electrical.length.degrees(electrical.frequency),
             electrical.frequency
         ));
+    }
+    if let Some(words) = piece.electrical.as_ref().and_then(PieceElectrical::proof) {
+        sheet.answer.push(format!("    right when: {words}"));
     }
     if !piece.match_group.is_empty() {
         sheet.answer.push(format!("    must agree with the other pieces of group {}", piece.match_group));

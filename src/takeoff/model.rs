@@ -7,7 +7,7 @@ use rust_decimal::Decimal;
 
 use crate::catalogue::PartChoice;
 use crate::plan::LineId;
-use crate::reception::Trim;
+use crate::reception::{Trim, TrimBasis};
 use crate::units::{ElectricalLength, Frequency, Length, VelocityFactor};
 
 /// Everything that one option needs, net, with waste and spares beside it.
@@ -193,6 +193,27 @@ pub struct PieceElectrical {
     pub trim: Option<Trim>,
     /// The largest length error that keeps the wanted rear rejection, physical.
     pub tolerance: Option<Length>,
+}
+
+impl PieceElectrical {
+    /// How a finished piece is proved right: "open far end, first dip at 4.357 MHz ± 22 kHz (± 7 cm)"; nothing for a piece
+    /// that need not be exact.
+    pub fn proof(&self) -> Option<String> {
+        let (trim, tolerance) = (self.trim?, self.tolerance?);
+        let physical = self.length.metres() * self.velocity_factor.value();
+        let kilohertz = trim.open.mhz() * 1000.0 * tolerance.metres() / physical;
+        let basis = match trim.basis {
+            TrimBasis::Points => "with the velocity factor of the test frequency",
+            TrimBasis::OneNumber => {
+                "± 0.6 % more, for the catalogue has one velocity factor for all frequencies"
+            }
+        };
+        Some(format!(
+            "open far end, first dip at {:.3} MHz ± {kilohertz:.0} kHz (± {:.1} cm), {basis}",
+            trim.open.mhz(),
+            tolerance.metres() * 100.0
+        ))
+    }
 }
 
 /// How a number came about, one step a line.
