@@ -40,6 +40,7 @@ struct ReelView {
     velocity_factor: String,
     proofs: Vec<Proof>,
     has_unknown_trim: bool,
+    has_rough_trim: bool,
     has_unknown_tolerance: bool,
 }
 
@@ -144,6 +145,7 @@ fn reel_view(
             .map(|electrical| electrical.velocity_factor.to_string())
             .unwrap_or_default(),
         delays: show::names(delays.iter().map(|piece| piece.label.as_str())),
+        has_rough_trim: proofs.iter().any(|proof| proof.is_rough),
         has_unknown_trim: proofs.iter().any(|proof| proof.trim == "–"),
         has_unknown_tolerance: proofs.iter().any(|proof| proof.tolerance == "–"),
         proofs,

@@ -57,7 +57,8 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
     let (bill, currency) = (option.bill, &input.project.currency);
     let money = |amount: Money| show::money(amount, currency);
     let priced = bill.lines.iter().filter(|line| line.pack_price.is_some());
-    let assumptions = input.project.assumptions.iter().map(|assumption| AssumptionRow {
+    let own = input.project.assumptions.iter().filter(|assumption| belongs(input, option, &assumption.key));
+    let assumptions = own.map(|assumption| AssumptionRow {
         key: assumption.key.clone(),
         value: assumption.value.clone(),
         why: assumption.why.clone(),
@@ -81,6 +82,16 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
         hints: bill.hints.clone(),
         assumptions: assumptions.collect(),
     }
+}
+
+/// Whether an assumption concerns this option: one of an array of another option does not.
+fn belongs(input: &Input<'_>, option: &OptionInput<'_>, key: &str) -> bool {
+    let Some(rest) = key.strip_prefix("array.") else { return true };
+    let of = |name: &str| rest.strip_prefix(name).is_some_and(|rest| rest.starts_with('.'));
+    let names = input.project.arrays.iter().map(|array| array.name.as_str()).filter(|name| of(name));
+    // Names may hold full stops, so the longest that fits is the one meant.
+    let meant = names.max_by_key(|name| name.len());
+    meant.is_none_or(|name| option.design.arrays.iter().any(|array| array.spec.name == name))
 }
 
 fn lines(option: &OptionInput<'_>, currency: &Currency) -> Vec<Row> {

@@ -1,5 +1,7 @@
 //! What to print in which order, with what is missing on top.
 
+use std::collections::BTreeSet;
+
 use serde::Serialize;
 
 use super::sheet::{Paper, Sheet};
@@ -13,7 +15,7 @@ pub(super) struct View {
     arrays: Vec<ArrayRow>,
     sheets: Vec<SheetRow>,
     frequencies: String,
-    totals: Vec<(String, String)>,
+    totals: Vec<Total>,
 }
 
 #[derive(Debug, Serialize)]
@@ -22,6 +24,12 @@ struct ArrayRow {
     listens: String,
     elements: String,
     places: String,
+}
+
+#[derive(Debug, Serialize)]
+struct Total {
+    name: String,
+    value: String,
 }
 
 #[derive(Debug, Serialize)]
@@ -54,7 +62,8 @@ struct OptionRow {
 pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
     let sheets = Sheet::ALL.into_iter().filter(|sheet| *sheet != Sheet::Index).enumerate();
     let pieces = option.takeoff.pieces.len();
-    let posts = option.design.arrays.iter().map(|array| array.plan.layout.points.len()).sum::<usize>();
+    let points = option.design.arrays.iter().flat_map(|array| &array.plan.layout.points);
+    let posts = points.map(|point| point.name.as_str()).collect::<BTreeSet<_>>().len();
     let currency = &input.project.currency;
     View {
         unpriced: purchase::missing(option),
@@ -63,14 +72,18 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
         sheets: sheets.map(|(n, sheet)| sheet_row(n + 1, sheet)).collect(),
         frequencies: frequencies(input),
         totals: vec![
-            ("pieces to cut".to_owned(), pieces.to_string()),
-            ("points in the field".to_owned(), posts.to_string()),
-            (
-                format!("materials with freight, tax and contingency, {currency}"),
+            total("pieces to cut", pieces.to_string()),
+            total("points in the field", posts.to_string()),
+            total(
+                &format!("materials with freight, tax and contingency, {currency}"),
                 at_least(option, show::money(option.bill.total, currency)),
             ),
         ],
     }
+}
+
+fn total(name: &str, value: String) -> Total {
+    Total { name: name.to_owned(), value }
 }
 
 fn at_least(option: &OptionInput<'_>, total: String) -> String {

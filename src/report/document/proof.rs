@@ -5,8 +5,9 @@ use std::collections::BTreeMap;
 use serde::Serialize;
 
 use super::show;
+use crate::reception::{Trim, TrimBasis};
 use crate::takeoff::{Piece, PieceElectrical};
-use crate::units::Length;
+use crate::units::{Frequency, Length};
 
 /// What one piece must measure.
 #[derive(Debug, Serialize)]
@@ -18,6 +19,9 @@ pub(super) struct Proof {
     velocity_factor: String,
     /// First resistance dip, far end open; a dash where nothing was computed.
     pub(super) trim: String,
+    shorted: String,
+    /// Whether the velocity factor at the test frequency is only assumed.
+    pub(super) is_rough: bool,
     /// Largest error, in metres and where a dip is known in kilohertz; a dash where nothing was computed.
     pub(super) tolerance: String,
 }
@@ -45,14 +49,18 @@ pub(super) fn proofs(pieces: &[&Piece]) -> Vec<Proof> {
 }
 
 fn proof(piece: &Piece, electrical: &PieceElectrical) -> Proof {
-    let trim = electrical.trim.map(|frequency| format!("{:.3}", frequency.mhz()));
+    let dip = |of: fn(Trim) -> Frequency| {
+        electrical.trim.map_or_else(|| "–".to_owned(), |trim| format!("{:.3}", of(trim).mhz()))
+    };
     Proof {
         label: piece.label.clone(),
         group: show::or_dash(&piece.match_group),
         electrical: format!("{:.3}", electrical.length.metres()),
         degrees: format!("{:.1}", electrical.length.degrees(electrical.frequency)),
         velocity_factor: electrical.velocity_factor.to_string(),
-        trim: show::or_dash(&trim.unwrap_or_default()),
+        trim: dip(|trim| trim.open),
+        shorted: dip(|trim| trim.shorted),
+        is_rough: electrical.trim.is_some_and(|trim| trim.basis == TrimBasis::OneNumber),
         tolerance: electrical.tolerance.map_or_else(|| "–".to_owned(), |t| tolerance(piece, electrical, t)),
     }
 }
@@ -62,7 +70,7 @@ fn tolerance(piece: &Piece, electrical: &PieceElectrical, length: Length) -> Str
     let metres = format!("± {} m", show::metres(length));
     match electrical.trim {
         Some(trim) if piece.finished > Length::ZERO => {
-            let khz = trim.mhz() * 1_000.0 * length.metres() / piece.finished.metres();
+            let khz = trim.open.mhz() * 1_000.0 * length.metres() / piece.finished.metres();
             format!("{metres}, ± {khz:.1} kHz")
         }
         Some(_) | None => metres,

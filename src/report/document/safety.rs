@@ -34,7 +34,7 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
     });
     let tallest = masts.max();
     let trees = fixtures().any(|fixture| {
-        matches!(fixture, Fixture::WireEnd(Supports::Trees) | Fixture::WirePost(Supports::Trees))
+        matches!(fixture, Fixture::WireEnd(support) | Fixture::WirePost(support) if support.kind == Supports::Trees)
     });
     View {
         tallest: tallest.map(|height| height.to_string()).unwrap_or_default(),
