@@ -1,6 +1,8 @@
 //! Results to bytes: JSON as pinned, and tables as text, Markdown or CSV from one view.
 
 pub mod compare;
+pub mod document;
+pub mod drawing;
 pub mod estimate;
 pub mod machine;
 pub mod parts;

@@ -1,0 +1,132 @@
+//! Everything before the field: permission, bench, stakes.
+
+use super::step::{Block, Hold, Reading, Scene, Step, labels, step};
+use crate::report::document::show;
+use crate::takeoff::PieceRole;
+
+/// The blocks up to the stakes.
+pub(super) fn blocks(scene: &Scene<'_>) -> Vec<Block> {
+    vec![permission(scene), bench(scene), stakes(scene)]
+}
+
+fn permission(scene: &Scene<'_>) -> Block {
+    let mut steps = Vec::new();
+    let detail = "access, hazards, stock, where to park; write the answers below";
+    step(&mut steps, ("walk", "T01"), &[], "Walk the site".to_owned(), detail);
+    let detail = "owner's consent in writing; search for buried services, wait for every reply";
+    step(
+        &mut steps,
+        ("permit", "T02"),
+        &["walk"],
+        "Ask for permission and for the buried-services search".to_owned(),
+        detail,
+    );
+    let detail = "every person, every visit; each signs it";
+    step(&mut steps, ("brief", "T47"), &["walk"], "Read the safety sheet together".to_owned(), detail);
+    let crossings = scene.input.project.crossings.iter().map(|crossing| crossing.kind.to_string());
+    let crossings: Vec<String> = crossings.collect();
+    let mut readings = vec![
+        Reading::new("overhead lines within 50 m? where, whose", "none, or the network owner has answered"),
+        Reading::new(
+            "electric fence? where is its energiser's earth",
+            "10 m or more from every antenna earth",
+        ),
+        Reading::new("buried services? reference number", "all replies in, marks on the ground"),
+    ];
+    if !crossings.is_empty() {
+        let good = "height or conduit agreed with the owner";
+        readings.push(Reading::new(format!("crossings: {}", crossings.join(", ")), good));
+    }
+    let rule = "Nothing is dug, driven or raised before these are answered.";
+    Block { title: "Permission", steps, hold: Some(Hold { rule, readings }) }
+}
+
+fn bench(scene: &Scene<'_>) -> Block {
+    let mut steps = Vec::new();
+    cables(scene, &mut steps);
+    boxes(scene, &mut steps);
+    let detail = "labels at both ends, 0.2 m from the plug; one bag a stake";
+    step(&mut steps, ("kit", "T39"), &["cut"], "Make labels and pack for the field".to_owned(), detail);
+    Block { title: "At the bench", steps, hold: None }
+}
+
+fn cables(scene: &Scene<'_>, steps: &mut Vec<Step>) {
+    let delays = scene.pieces(PieceRole::Delay);
+    if !delays.is_empty() {
+        let detail =
+            "a sample of 20 m or more of the same reel, far end open; compare with the cut list, sheet cuts";
+        let what = format!("Measure the velocity factor of the reel for {}", labels(&delays));
+        step(steps, ("velocity", "T31"), &[], what, detail);
+    }
+    let pieces = scene.option.takeoff.pieces.len();
+    let what = format!("Cut {} by the cut list", show::count(pieces, "piece", "pieces"));
+    step(
+        steps,
+        ("cut", "T33"),
+        &["velocity"],
+        what,
+        "mark every cut before the first; label both ends first",
+    );
+    if !delays.is_empty() {
+        let what = format!("Trim {} to the electrical length", labels(&delays));
+        let detail = "both plugs fitted; take off a third of the error at a time";
+        step(steps, ("trim", "T32"), &["velocity", "cut"], what, detail);
+    }
+    let laid = scene.laid();
+    if !laid.is_empty() {
+        let what = format!("Fit one plug on each of {}", labels(&laid));
+        step(steps, ("plug-bench", "T29"), &["cut"], what, "the other end after it is laid");
+    }
+}
+
+fn boxes(scene: &Scene<'_>, steps: &mut Vec<Step>) {
+    if let Some((count, places)) = scene.places("feed-box") {
+        let what = format!("Build and test {count} feed boxes: {places}");
+        let detail = "all wound and connected in the same sense: compare each with the first, ± 1°";
+        step(steps, ("feed-bench", "T34"), &[], what, detail);
+    }
+    if let Some((count, places)) = scene.places("termination-box") {
+        let what = format!("Build and test {count} termination boxes: {places}");
+        step(steps, ("termination-bench", "T35"), &[], what, "read the resistor before the lid goes on");
+    }
+    if let Some((count, places)) = scene.places("choke") {
+        let what = format!("Make {count} chokes");
+        step(steps, ("choke-bench", "T38"), &[], what, format!("for {places}"));
+    }
+    if let Some((count, places)) = scene.places("hub-box") {
+        let inside: Vec<String> = ["hybrid-2way", "hybrid-3way", "inverter", "pad", "amplifier"]
+            .into_iter()
+            .filter_map(|role| scene.places(role).map(|(n, at)| format!("{n} × {role} ({at})")))
+            .collect();
+        let what = format!("Build and test {count} hub boxes: {places}");
+        let detail = if inside.is_empty() { String::new() } else { format!("inside: {}", inside.join(", ")) };
+        step(steps, ("hub-bench", "T36"), &[], what, detail);
+    }
+}
+
+fn stakes(scene: &Scene<'_>) -> Block {
+    let mut steps = Vec::new();
+    let what = "Set the datum and the base line".to_owned();
+    step(
+        &mut steps,
+        ("datum", "T03"),
+        &["permit", "brief"],
+        what,
+        "sheet stakes; true bearings, not compass",
+    );
+    let points = scene.point_count();
+    let what = format!("Drive {}", show::count(points, "stake", "stakes"));
+    step(
+        &mut steps,
+        ("stake", "T04"),
+        &["datum"],
+        what,
+        "each from the datum and from the stake before; tape level",
+    );
+    let readings = vec![
+        Reading::new("check distances on sheet stakes", "all inside the limit in the last column"),
+        Reading::new("the beam arrow on the ground points to the wanted side", "yes: the leader looked"),
+    ];
+    let rule = "No post is set before the layout is proved.";
+    Block { title: "Stake out", steps, hold: Some(Hold { rule, readings }) }
+}

@@ -1,0 +1,473 @@
+//! The site plan: true north up, everything of one option at one round scale, a detail where things stand close.
+
+use std::collections::BTreeSet;
+
+use super::ground::Ground;
+use super::place::{Point as Paper, Rect, Taken};
+use super::plan_key::{Stroke, draw_key, draw_north, draw_scale_bar};
+use super::sign::{self, Sign};
+use super::svg::{Anchor, Svg, Type, num};
+use crate::design::Design;
+use crate::plan::{ArrayPlan, Fixture, LineRole, Point, PointKind, SitePosition};
+use crate::project::Project;
+use crate::units::{Angle, Bearing, Length};
+
+/// Which control cables run where.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum ControlCable {
+    /// Beside the main line and every run.
+    Laid,
+    /// None.
+    Absent,
+}
+
+const SHEET: (f64, f64) = (250.0, 150.0);
+const AREA: Rect = Rect { left: 1.0, top: 1.0, right: 184.0, bottom: 149.0 };
+const COLUMN: f64 = 190.0;
+/// Signs nearer than this on paper are drawn small, and once more in a detail.
+const CROWDED: f64 = 9.0;
+
+/// Draws the plan of one option, 250 × 150 mm.
+pub fn draw(project: &Project, design: &Design, control: ControlCable) -> String {
+    let scene = Scene::new(project, design);
+    let mut svg = Svg::new(SHEET.0, SHEET.1, "sp");
+    svg.hatches();
+    let mut board = Board { svg, taken: Taken::new(AREA), ground: scene.ground, area: AREA };
+    draw_keep_outs(&mut board, project);
+    draw_lines(&mut board, design, control);
+    draw_dimensions(&mut board, design);
+    scene.draw_signs(&mut board);
+    draw_north(&mut board.svg, &mut board.taken, AREA, project.site.declination);
+    for array in &design.arrays {
+        draw_beam(&mut board, &array.plan, project.site.declination);
+    }
+    scene.draw_names(&mut board);
+    draw_line_names(&mut board, design);
+    scene.draw_receiver_far(&mut board, project);
+    draw_names_of_land(&mut board, project);
+    let mut svg = board.svg;
+    let strokes = strokes_used(design, control);
+    let foot = draw_key(&mut svg, COLUMN, &scene.signs_used(), &strokes);
+    svg = draw_detail(svg, &scene, design, foot);
+    draw_scale_bar(&mut svg, COLUMN, 141.0, &scene.ground);
+    svg.finish("Site plan, true north up; every place on it stands in the table of stakes")
+}
+
+/// A drawing board: what is drawn, what is taken, how the site lies on it.
+struct Board {
+    svg: Svg,
+    taken: Taken,
+    ground: Ground,
+    area: Rect,
+}
+
+impl Board {
+    fn line(&mut self, stroke: Stroke, a: Paper, b: Paper) {
+        if let Some((a, b)) = self.area.clip(a, b) {
+            stroke.draw(&mut self.svg, a, b);
+            self.taken.line(a, b);
+        }
+    }
+
+    fn label(&mut self, at: Paper, nearest: f64, kind: Type, text: &str) {
+        let Some(label) = self.taken.text(at, nearest, kind, text) else { return };
+        if label.far {
+            let end = (label.at.0, label.at.1 - 0.35 * kind.size);
+            self.svg.line(at, end, 0.13, "");
+        }
+        self.svg.text(label.at, kind.at(label.anchor).haloed(), text);
+    }
+}
+
+/// The points of an option, each once.
+struct Scene<'a> {
+    points: Vec<&'a Point>,
+    ground: Ground,
+    receiver_on_plan: bool,
+    anchors: Vec<SitePosition>,
+}
+
+impl<'a> Scene<'a> {
+    fn new(project: &Project, design: &'a Design) -> Self {
+        let mut points: Vec<&Point> = Vec::new();
+        for point in design.arrays.iter().flat_map(|array| &array.plan.layout.points) {
+            if !points.iter().any(|known| known.name == point.name) {
+                points.push(point);
+            }
+        }
+        let near: Vec<SitePosition> =
+            points.iter().filter(|p| p.kind != PointKind::Receiver).map(|p| p.site).collect();
+        let mut all = near.clone();
+        all.push(project.site.receiver.into());
+        let (with, without) = (Ground::fitting(&all, AREA, 15.0), Ground::fitting(&near, AREA, 15.0));
+        // A far receiver would shrink the array to nothing: then its line leaves the sheet.
+        let receiver_on_plan = with.denominator <= 1.6 * without.denominator;
+        let ground = if receiver_on_plan { with } else { without };
+        if !receiver_on_plan {
+            points.retain(|point| point.kind != PointKind::Receiver);
+        }
+        let anchors = points.iter().filter(|p| p.kind != PointKind::Post).map(|p| p.site).collect();
+        Self { points, ground, receiver_on_plan, anchors }
+    }
+
+    /// Whether another sign stands so close that both are drawn small.
+    fn crowded(&self, point: &Point) -> bool {
+        let near = |other: &&SitePosition| self.ground.mm(point.site.distance_m(**other)) < CROWDED;
+        self.anchors.iter().filter(near).count() > 1
+    }
+
+    fn draw_signs(&self, board: &mut Board) {
+        for point in &self.points {
+            let at = self.ground.paper(point.site);
+            let scale = if point.kind != PointKind::Post && self.crowded(point) { 0.5 } else { 1.0 };
+            draw_point(board, point, at, scale);
+        }
+    }
+
+    fn draw_names(&self, board: &mut Board) {
+        for point in self.points.iter().filter(|point| point.kind != PointKind::Post) {
+            let at = self.ground.paper(point.site);
+            let half = sign_of(point).half() * if self.crowded(point) { 0.5 } else { 1.0 };
+            board.label(at, half + 1.4, Type::bold(3.9), &point.name);
+        }
+    }
+
+    fn draw_receiver_far(&self, board: &mut Board, project: &Project) {
+        let receiver: SitePosition = project.site.receiver.into();
+        if self.receiver_on_plan {
+            return;
+        }
+        let mut from: Vec<&&Point> = self.points.iter().filter(|p| p.kind == PointKind::Hub).collect();
+        if from.is_empty() {
+            from = self.points.iter().collect();
+        }
+        let distance = |point: &&&Point| point.site.distance_m(receiver);
+        let Some(nearest) = from.into_iter().min_by(|a, b| distance(&a).total_cmp(&distance(&b))) else {
+            return;
+        };
+        let (a, b) = (self.ground.paper(nearest.site), self.ground.paper(receiver));
+        let Some((_, edge)) = board.area.clip(a, b) else { return };
+        let words = format!(
+            "to RX: {:.2} m at {} from {}",
+            nearest.site.distance_m(receiver),
+            nearest.site.bearing_to(receiver),
+            nearest.name
+        );
+        board.label(edge, 2.0, Type::bold(3.2), &words);
+    }
+
+    fn signs_used(&self) -> Vec<Sign> {
+        let mut used: BTreeSet<Sign> = self.points.iter().map(|point| sign_of(point)).collect();
+        if self.points.iter().any(|point| has_earth(point)) {
+            used.insert(Sign::Earth);
+        }
+        used.into_iter().collect()
+    }
+}
+
+fn sign_of(point: &Point) -> Sign {
+    let mast = point.fixtures.iter().any(|fixture| matches!(fixture, Fixture::Mast(_)));
+    match point.kind {
+        PointKind::FeedPoint if mast => Sign::Vertical,
+        PointKind::FeedPoint => Sign::Feed,
+        PointKind::Termination => Sign::Termination,
+        PointKind::Post => Sign::Post,
+        PointKind::Hub => Sign::Hub,
+        PointKind::Receiver => Sign::Receiver,
+    }
+}
+
+fn has_earth(point: &Point) -> bool {
+    point.fixtures.iter().any(|fixture| matches!(fixture, Fixture::Earth(_)))
+}
+
+fn draw_point(board: &mut Board, point: &Point, at: Paper, scale: f64) {
+    let sign = sign_of(point);
+    if has_earth(point) && scale > 0.9 {
+        sign::draw(&mut board.svg, Sign::Earth, (at.0, at.1 + 4.8), 1.0);
+        board.taken.rect(Rect::about((at.0, at.1 + 4.8), 1.8, 1.8));
+    }
+    sign::draw(&mut board.svg, sign, at, scale);
+    let half = sign.half() * scale;
+    board.taken.rect(Rect::about(at, half, half));
+}
+
+fn strokes_used(design: &Design, control: ControlCable) -> Vec<Stroke> {
+    let mut used = BTreeSet::new();
+    for plan in design.arrays.iter().map(|array| &array.plan) {
+        if !plan.layout.spans.is_empty() {
+            used.insert(Stroke::Wire);
+        }
+        used.extend(plan.feed.lines.iter().filter_map(|line| stroke_of(line.role)));
+    }
+    if control == ControlCable::Laid {
+        used.insert(Stroke::Control);
+    }
+    used.into_iter().collect()
+}
+
+const fn stroke_of(role: LineRole) -> Option<Stroke> {
+    match role {
+        LineRole::Branch | LineRole::Run => Some(Stroke::Branch),
+        LineRole::Main => Some(Stroke::Main),
+        LineRole::Delay => None,
+    }
+}
+
+/// Wires, coax and control cable, the last beside the lines it accompanies.
+fn draw_lines(board: &mut Board, design: &Design, control: ControlCable) {
+    for plan in design.arrays.iter().map(|array| &array.plan) {
+        let at = |id| board.ground.paper(plan.layout.point(id).site);
+        let mut lines: Vec<(Stroke, Paper, Paper)> = Vec::new();
+        for line in &plan.feed.lines {
+            let Some(stroke) = stroke_of(line.role) else { continue };
+            let (a, b) = (at(line.termini.from), at(line.termini.to));
+            lines.push((stroke, a, b));
+            if control == ControlCable::Laid && matches!(line.role, LineRole::Main | LineRole::Run) {
+                let (nx, ny) = normal(a, b);
+                let beside = |p: Paper| (p.0 + 1.8 * nx, p.1 + 1.8 * ny);
+                lines.push((Stroke::Control, beside(a), beside(b)));
+            }
+        }
+        for span in &plan.layout.spans {
+            lines.push((Stroke::Wire, at(span.from), at(span.to)));
+        }
+        for (stroke, a, b) in lines {
+            board.line(stroke, a, b);
+        }
+    }
+}
+
+/// The unit vector to the right of a line on paper; nothing to the right of a point.
+fn normal(a: Paper, b: Paper) -> Paper {
+    let (dx, dy) = (b.0 - a.0, b.1 - a.1);
+    let length = (dx * dx + dy * dy).sqrt();
+    if length > 0.0 { (-dy / length, dx / length) } else { (0.0, 0.0) }
+}
+
+fn apart(a: Paper, b: Paper) -> f64 {
+    ((b.0 - a.0).powi(2) + (b.1 - a.1).powi(2)).sqrt()
+}
+
+fn angle(a: Paper, b: Paper) -> f64 {
+    libm::atan2(b.1 - a.1, b.0 - a.0).to_degrees()
+}
+
+/// The length of every wire along it, and the distance between neighbours outside the array.
+fn draw_dimensions(board: &mut Board, design: &Design) {
+    let kind = Type::plain(3.2).at(Anchor::Middle).haloed();
+    for plan in design.arrays.iter().map(|array| &array.plan) {
+        for span in &plan.layout.spans {
+            let name = &plan.layout.elements[span.element.0].name;
+            let (a, b) = (plan.layout.point(span.from).site, plan.layout.point(span.to).site);
+            let (a, b) = (board.ground.paper(a), board.ground.paper(b));
+            let at = (a.0 + 0.62 * (b.0 - a.0), a.1 + 0.62 * (b.1 - a.1));
+            let words = format!("{name}: {}", span.length);
+            if kind.width(&words) < apart(a, b) {
+                board.svg.turned_text(at, angle(a, b), 1.2, kind, &words);
+            }
+        }
+        let middle = centroid(plan);
+        for pair in plan.layout.elements.windows(2) {
+            let site = |n: usize| plan.layout.point(pair[n].feed_point).site;
+            dimension(board, site(0), site(1), board.ground.paper(middle));
+        }
+    }
+}
+
+/// A dimension line 9 mm off, on the side away from `middle`.
+fn dimension(board: &mut Board, from: SitePosition, to: SitePosition, middle: Paper) {
+    let (a, b) = (board.ground.paper(from), board.ground.paper(to));
+    let words = Length::from_metres_nearest(from.distance_m(to)).to_string();
+    let kind = Type::plain(3.2).at(Anchor::Middle).haloed();
+    if apart(a, b) < kind.width(&words) + 2.0 {
+        return;
+    }
+    let (nx, ny) = normal(a, b);
+    let half = (f64::midpoint(a.0, b.0), f64::midpoint(a.1, b.1));
+    let outward = if (half.0 - middle.0) * nx + (half.1 - middle.1) * ny < 0.0 { -9.0 } else { 9.0 };
+    let off = |p: Paper, by: f64| (p.0 + nx * by, p.1 + ny * by);
+    let (c, d) = (off(a, outward), off(b, outward));
+    if !board.area.holds(Rect::about(c, 1.0, 1.0)) || !board.area.holds(Rect::about(d, 1.0, 1.0)) {
+        return;
+    }
+    for (start, end) in [(a, c), (b, d)] {
+        let (ux, uy) = (nx * outward.signum(), ny * outward.signum());
+        board.svg.line(
+            (start.0 + 4.0 * ux, start.1 + 4.0 * uy),
+            (end.0 + 1.2 * ux, end.1 + 1.2 * uy),
+            0.13,
+            "",
+        );
+        board.svg.line((end.0 - 0.9, end.1 + 0.9), (end.0 + 0.9, end.1 - 0.9), 0.35, "");
+    }
+    board.svg.line(c, d, 0.18, "");
+    board.taken.line(c, d);
+    let at = (f64::midpoint(c.0, d.0), f64::midpoint(c.1, d.1));
+    board.svg.turned_text(at, angle(c, d), 1.0, kind, &words);
+    board.taken.rect(Rect::about(at, 5.0, 5.0));
+}
+
+/// The middle of everything but the receiver.
+fn centroid(plan: &ArrayPlan) -> SitePosition {
+    let places: Vec<_> = plan
+        .layout
+        .points
+        .iter()
+        .filter(|point| point.kind != PointKind::Receiver)
+        .map(|point| point.at)
+        .collect();
+    plan.layout.frame.to_site(crate::plan::Position::mean(&places))
+}
+
+/// A hollow arrow toward where the array listens, with the bearing in words.
+fn draw_beam(board: &mut Board, plan: &ArrayPlan, declination: Option<Angle>) {
+    let middle = board.ground.paper(centroid(plan));
+    let bearing = plan.feed.switch.states.first().map_or(plan.layout.heading, |state| state.bearing);
+    let (sin, cos) = libm::sincos(bearing.radians());
+    let across = |by: f64| (middle.0 + by * cos, middle.1 + by * sin);
+    let mut places: Vec<Paper> = [0.0, 14.0, -14.0, 20.0, -20.0, 28.0, -28.0, 38.0, -38.0, 50.0, -50.0]
+        .into_iter()
+        .map(across)
+        .collect();
+    places.extend([(40.0, 25.0), (145.0, 25.0), (40.0, 125.0), (145.0, 125.0)]);
+    let free = places.iter().find(|at| board.taken.is_free(Rect::about(**at, 10.0, 12.0)));
+    let at = *free.unwrap_or(&places[1]);
+    board.svg.raw(&format!(
+        r##"<g transform="translate({} {}) rotate({})"><path d="M-2.6 10V-4H-5.4L0 -12L5.4 -4H2.6V10Z" fill="#fff" stroke="#000" stroke-width=".5"/></g>"##,
+        num(at.0),
+        num(at.1),
+        num(bearing.degrees())
+    ));
+    board.taken.rect(Rect::about(at, 9.0, 11.0));
+    let states = &plan.feed.switch.states;
+    let words = match states.len() {
+        0 | 1 => format!("listens {} true", bearing),
+        n => format!("first of {n}: {} true", bearing),
+    };
+    board.label(at, 11.0, Type::bold(3.9), &words);
+    if let Some(angle) = declination {
+        let compass = Bearing::from_degrees(bearing.degrees() - angle.degrees());
+        board.label(at, 11.0, Type::plain(3.9), &format!("{compass} compass"));
+    }
+}
+
+fn draw_line_names(board: &mut Board, design: &Design) {
+    let kind = Type::plain(3.2);
+    for array in &design.arrays {
+        let plan = &array.plan;
+        for (line, length) in plan.feed.lines.iter().zip(&array.lengths) {
+            let site = |id| plan.layout.point(id).site;
+            let (a, b) =
+                (board.ground.paper(site(line.termini.from)), board.ground.paper(site(line.termini.to)));
+            let Some((a, b)) = board.area.clip(a, b) else { continue };
+            if apart(a, b) >= 12.0 {
+                let middle = (f64::midpoint(a.0, b.0), f64::midpoint(a.1, b.1));
+                board.label(middle, 1.6, kind, &format!("{} {}", line.label, length.finished));
+            }
+        }
+    }
+}
+
+fn draw_keep_outs(board: &mut Board, project: &Project) {
+    for keep_out in &project.keep_out {
+        let corners: Vec<String> = keep_out
+            .polygon
+            .iter()
+            .map(|corner| {
+                let at = board.ground.paper((*corner).into());
+                // The sheet's edge cuts an area that is larger than the plan.
+                let x = at.0.clamp(board.area.left, board.area.right);
+                let y = at.1.clamp(board.area.top, board.area.bottom);
+                format!("{},{}", num(x), num(y))
+            })
+            .collect();
+        let fill = board.svg.id("cross");
+        board.svg.raw(&format!(
+            r##"<polygon points="{}" fill="url(#{fill})" stroke="#000" stroke-width=".7" stroke-dasharray="6 1.2 1.2 1.2"/>"##,
+            corners.join(" ")
+        ));
+    }
+    for crossing in &project.crossings {
+        let at = board.ground.paper(crossing.at.into());
+        if board.area.holds(Rect::about(at, 2.0, 2.0)) {
+            let (x, y) = (num(at.0 - 2.0), num(at.1 - 2.0));
+            board.svg.stroke(&format!("M{x} {y}l4 4m0 -4l-4 4"), 0.5, "");
+            board.taken.rect(Rect::about(at, 2.0, 2.0));
+        }
+    }
+}
+
+fn draw_names_of_land(board: &mut Board, project: &Project) {
+    for keep_out in &project.keep_out {
+        let corners: Vec<Paper> =
+            keep_out.polygon.iter().map(|corner| board.ground.paper((*corner).into())).collect();
+        let count = f64::from(u32::try_from(corners.len()).unwrap_or(1).max(1));
+        let sum = corners.iter().fold((0.0, 0.0), |sum, c| (sum.0 + c.0, sum.1 + c.1));
+        let at = (
+            (sum.0 / count).clamp(board.area.left + 5.0, board.area.right - 5.0),
+            (sum.1 / count).clamp(board.area.top + 5.0, board.area.bottom - 5.0),
+        );
+        board.label(at, 0.0, Type::bold(3.2), &format!("KEEP OUT: {}", keep_out.name));
+    }
+    for crossing in &project.crossings {
+        let at = board.ground.paper(crossing.at.into());
+        if board.area.holds(Rect::about(at, 2.0, 2.0)) {
+            let words = format!("{}, {} wide", crossing.kind, crossing.width);
+            board.label(at, 3.0, Type::plain(3.2), &words);
+        }
+    }
+}
+
+/// The first crowd of signs once more, larger, under the key.
+fn draw_detail(mut svg: Svg, scene: &Scene<'_>, design: &Design, foot: f64) -> Svg {
+    let Some(first) = scene.points.iter().find(|p| p.kind != PointKind::Post && scene.crowded(p)) else {
+        return svg;
+    };
+    let area = Rect { left: COLUMN, top: foot + 4.0, right: SHEET.0 - 0.5, bottom: 132.0 };
+    if area.bottom - area.top < 34.0 {
+        return svg;
+    }
+    let members = crowd_of(scene, first);
+    let places: Vec<SitePosition> = members.iter().map(|point| point.site).collect();
+    let ground = Ground::fitting(&places, area, 12.0);
+    let title = format!("Close up, 1 : {:.0}", ground.denominator);
+    svg.rect((area.left, area.top), (area.right - area.left, area.bottom - area.top), "none", 0.25);
+    svg.text((area.left, area.top - 1.2), Type::bold(3.2), &title);
+    let mut board = Board { svg, taken: Taken::new(area), ground, area };
+    draw_lines(&mut board, design, ControlCable::Absent);
+    for point in &members {
+        draw_point(&mut board, point, ground.paper(point.site), 1.0);
+    }
+    for point in &members {
+        let at = ground.paper(point.site);
+        board.label(at, sign_of(point).half() + 1.2, Type::bold(3.6), &point.name);
+    }
+    for (n, a) in members.iter().enumerate() {
+        for b in members.iter().skip(n + 1).filter(|b| b.kind == a.kind && a.kind == PointKind::FeedPoint) {
+            let middle = ground.paper(a.site);
+            let other = ground.paper(b.site);
+            let middle = (f64::midpoint(middle.0, other.0), f64::midpoint(middle.1, other.1));
+            let metres = Length::from_metres_nearest(a.site.distance_m(b.site));
+            board.label(middle, 3.0, Type::plain(3.2), &format!("{} to {}: {metres}", a.name, b.name));
+        }
+    }
+    board.svg
+}
+
+/// The points that hang together with `first` by distances under the crowding limit.
+fn crowd_of<'a>(scene: &Scene<'a>, first: &'a Point) -> Vec<&'a Point> {
+    let mut members: Vec<&Point> = vec![first];
+    let mut next = 0;
+    while next < members.len() {
+        let at = members[next].site;
+        for point in scene.points.iter().filter(|point| point.kind != PointKind::Post) {
+            let near = scene.ground.mm(at.distance_m(point.site)) < CROWDED;
+            if near && !members.iter().any(|known| known.name == point.name) {
+                members.push(point);
+            }
+        }
+        next += 1;
+    }
+    members
+}

@@ -1,0 +1,181 @@
+//! What the sheets say, without a browser.
+
+use std::collections::BTreeMap;
+
+use arraywright::report::document::{Sheet, TemplateError, template_names};
+
+use crate::sample::{Sample, demos, hostile};
+
+#[test]
+fn every_demo_gets_every_sheet_in_both_formats() {
+    for demo in demos() {
+        let sample = Sample::demo(&demo);
+        let files = sample.render();
+        for option in sample.project.options() {
+            for sheet in Sheet::ALL {
+                for extension in ["html", "md"] {
+                    let name = format!("{}.{extension}", sheet.name());
+                    let name = if option.is_empty() { name } else { format!("{option}/{name}") };
+                    let text = files.get(&name).unwrap_or_else(|| panic!("{demo}: no {name}"));
+                    assert!(text.contains("7f3a91c2"), "{demo}: {name} carries no hash");
+                    assert!(text.contains("2026-06-01"), "{demo}: {name} carries no date");
+                }
+            }
+        }
+        assert!(files.contains_key("index.html"), "{demo}");
+    }
+}
+
+#[test]
+fn the_same_input_gives_the_same_bytes() {
+    assert_eq!(hostile().render(), hostile().render());
+}
+
+#[test]
+fn options_do_not_mix() {
+    let files = Sample::demo("two-ways-north-west").render();
+    assert!(!files.contains_key("cuts.html"), "no sheet stands outside its option's folder");
+    assert!(files["index.html"].contains("broadside/index.html"));
+    for (name, text) in files.iter().filter(|(name, _)| name.starts_with("broadside/")) {
+        assert!(!text.contains("nw-echelon"), "{name} speaks of the other option");
+    }
+}
+
+#[test]
+fn a_hostile_name_stays_text_in_html() {
+    for (name, text) in hostile().render().iter().filter(|(name, _)| name.ends_with(".html")) {
+        assert!(!text.contains("<script"), "{name}");
+        assert_eq!(text.matches("</style>").count(), 1, "{name}");
+        assert!(!text.contains("<b>#1"), "{name}");
+        assert!(!text.contains("NaN"), "{name}");
+    }
+}
+
+#[test]
+fn a_hostile_name_stays_text_in_markdown() {
+    for (name, text) in hostile().render().iter().filter(|(name, _)| name.ends_with(".md")) {
+        assert!(!text.contains("<script") && !text.contains("<b>"), "{name}");
+        assert!(!text.contains("| `b`") && !text.contains("[z](u)"), "{name}");
+        assert!(tables_are_whole(text), "{name} has a row with another number of cells than its head");
+    }
+    for demo in demos() {
+        for (name, text) in Sample::demo(&demo).render().iter().filter(|(name, _)| name.ends_with(".md")) {
+            assert!(tables_are_whole(text), "{demo}: {name}");
+        }
+    }
+}
+
+/// Every row of every table has as many cells as the table's first row.
+fn tables_are_whole(text: &str) -> bool {
+    let mut cells = None;
+    for line in text.lines() {
+        if !line.starts_with('|') {
+            cells = None;
+            continue;
+        }
+        let bars = line.replace("\\\\", "").replace("\\|", "").matches('|').count();
+        if *cells.get_or_insert(bars) != bars {
+            return false;
+        }
+    }
+    true
+}
+
+#[test]
+fn every_piece_is_cut_once_and_labelled_at_both_ends() {
+    let files = Sample::demo("vertical-cells").render();
+    let cuts = &files["cuts.md"];
+    let labels = &files["labels.md"];
+    for label in ["B1", "B6", "D1", "R2", "M1"] {
+        let row =
+            |line: &&str| line.starts_with('|') && line.split('|').nth(2).is_some_and(|c| c.trim() == label);
+        assert_eq!(cuts.lines().filter(row).count(), 1, "{label} stands in one row of one reel");
+        let strip = |line: &&str| line.starts_with(&format!("| {label} |"));
+        assert_eq!(labels.lines().filter(strip).count(), 2, "{label} has a label at each end");
+    }
+}
+
+#[test]
+fn the_delay_stops_the_bench_until_the_reel_is_measured() {
+    let files = Sample::demo("two-ways-north-west").render();
+    assert!(files["echelon/cuts.html"].contains("STOP. Measure this reel first."));
+    assert!(!files["broadside/cuts.html"].contains("STOP. Measure this reel first."));
+}
+
+#[test]
+fn nothing_is_sealed_before_it_is_tested_nor_connected_before_it_is_bonded() {
+    for demo in demos() {
+        let files = Sample::demo(&demo).render();
+        for (name, text) in files.iter().filter(|(name, _)| name.ends_with("build.md")) {
+            let at = |words: &str| text.find(words).unwrap_or_else(|| panic!("{demo}: {name}: {words}"));
+            assert!(at("Test before sealing") < at("Seal every joint"));
+            assert!(at("before the entry is bonded") < at("to the entry panel"));
+            assert!(at("No post is set before") < at("Clear and set supports"));
+        }
+    }
+}
+
+#[test]
+fn a_prerequisite_always_comes_first() {
+    let text = &hostile().render()["build.md"];
+    let mut steps = 0;
+    for line in text.lines().filter(|line| line.starts_with("| ☐ |")) {
+        let cells: Vec<&str> = line.replace("\\|", "/").leak().split('|').map(str::trim).collect();
+        let number: usize = cells[2].parse().expect("a step number");
+        for after in cells[4].split(", ").filter(|after| !after.is_empty()) {
+            assert!(
+                after.parse::<usize>().expect("a step number") < number,
+                "step {number} waits for {after}"
+            );
+        }
+        steps += 1;
+    }
+    assert!(steps > 20);
+}
+
+#[test]
+fn invented_prices_are_called_invented() {
+    for demo in demos() {
+        for (name, text) in Sample::demo(&demo).render() {
+            if name.ends_with("estimate.html") || name.ends_with("purchase.md") {
+                assert!(text.contains("invented round figures"), "{demo}: {name}");
+            }
+        }
+    }
+}
+
+#[test]
+fn a_stake_stands_where_trigonometry_puts_it() {
+    // Broadside pair 76 m apart looking at 312°: the left feed point is 38 m from the datum at 312° − 90° = 222° true.
+    let files = Sample::demo("two-ways-north-west").render();
+    let row = files["broadside/stakes.md"]
+        .lines()
+        .find(|line| line.contains("| W1-F |"))
+        .expect("a row")
+        .to_owned();
+    let cells: Vec<&str> = row.split('|').map(str::trim).collect();
+    // sin 222° = −0.66913, cos 222° = −0.74314.
+    assert_eq!(&cells[4..8], &["-25.43", "-28.24", "38.00", "222.0"]);
+}
+
+#[test]
+fn a_template_of_the_same_name_takes_the_place_of_ours() {
+    let sample = Sample::demo("vertical-cells");
+    let own = BTreeMap::from([("safety.md".to_owned(), "own {{ head.project }}".to_owned())]);
+    let files = sample.render_with(&own).expect("it renders");
+    assert!(files["safety.md"].starts_with("own Sallow Common"));
+}
+
+#[test]
+fn a_template_that_does_not_work_says_which_and_why() {
+    let sample = Sample::demo("vertical-cells");
+    let unknown = BTreeMap::from([("purchases.html".to_owned(), String::new())]);
+    match sample.render_with(&unknown) {
+        Err(TemplateError::Unknown { nearest, .. }) => assert_eq!(nearest, Some("purchase.html")),
+        other => panic!("{:?}", other.map(|files| files.len())),
+    }
+    let broken = BTreeMap::from([("plan.md".to_owned(), "{{ view.nothing_like_it }}".to_owned())]);
+    let error = sample.render_with(&broken).expect_err("an unknown value").to_string();
+    assert!(error.contains("plan.md") && error.contains("nothing_like_it"), "{error}");
+    assert!(template_names().contains(&"sheet.css"));
+}
