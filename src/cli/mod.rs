@@ -10,7 +10,7 @@ mod output;
 mod parts;
 mod start;
 mod why;
-// mod workorder;
+mod workorder;
 
 use std::ffi::OsString;
 use std::path::PathBuf;
@@ -40,8 +40,8 @@ enum Command {
     Estimate(estimate::Estimate),
     /// Put options side by side
     Compare(compare::Compare),
-    /// x that the crew gets
-    // W
+    /// Write the set of documents that the crew gets
+    Workorder(workorder::WorkOrder),
     /// Say how a quantity, length or price came about
     Why(why::Why),
     /// Look after the price catalogue
@@ -106,7 +106,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
         Command::Parts(command) => command.run(),
         Command::Estimate(command) => command.run(),
         Command::Compare(command) => command.run(),
-        // W
+        Command::Workorder(command) => command.run(),
         Command::Why(command) => command.run(),
         Command::Catalog(command) => command.run(),
     };
