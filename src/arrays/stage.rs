@@ -87,15 +87,13 @@ impl Recipe {
     /// Puts a pad into the one leg of a pair that has no delay; anything else stays as it is.
     #[must_use]
     pub fn balanced(self, db: f64, why: &str) -> Self {
-        match self {
-            Self::Combine(mut legs) if legs.len() == 2 && legs[0].is_delayed() != legs[1].is_delayed() => {
-                let plain = usize::from(legs[0].is_delayed());
-                let of = Box::new(legs.remove(plain));
-                legs.insert(plain, Self::Pad { db, why: why.to_owned(), of });
-                Self::Combine(legs)
-            }
-            other => other,
+        let Self::Combine(mut legs) = self else { return self };
+        if legs.len() == 2 && legs[0].is_delayed() != legs[1].is_delayed() {
+            let plain = usize::from(legs[0].is_delayed());
+            let of = Box::new(legs.remove(plain));
+            legs.insert(plain, Self::Pad { db, why: why.to_owned(), of });
         }
+        Self::Combine(legs)
     }
 
     fn is_delayed(&self) -> bool {

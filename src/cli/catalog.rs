@@ -74,14 +74,15 @@ fn check(folder: Option<&Path>, alone: bool) -> Result<Outcome, Failure> {
         "this catalogue can be used; warnings to read"
     };
     let mut text = format!("{verdict}\nread: {of}\n");
-    text.push_str(&format!(
-        "{} parts, {} offers, {} cables and wires, {} tasks, {} terrain classes\n",
+    let _ = writeln!(
+        text,
+        "{} parts, {} offers, {} cables and wires, {} tasks, {} terrain classes",
         catalogue.parts.len(),
         catalogue.offers.len(),
         catalogue.cables.len(),
         catalogue.labour.len(),
         catalogue.terrain.len()
-    ));
+    );
     for repair in supply.repairs.lines() {
         let _ = writeln!(text, "{repair}");
     }
@@ -106,7 +107,7 @@ fn age(folder: Option<&Path>, on: NaiveDate) -> Result<Outcome, Failure> {
         _ => format!("no price has a date ({undated} offers)\n"),
     };
     for (days, offer) in dated.iter().filter(|(days, _)| *days > 180) {
-        text.push_str(&format!("{days:>6} days  {offer}\n"));
+        let _ = writeln!(text, "{days:>6} days  {offer}");
     }
     output::text(&text)?;
     Ok(Outcome::Done)

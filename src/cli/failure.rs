@@ -31,10 +31,12 @@ pub(super) enum Failure {
 impl Failure {
     /// A file that could not be read or written.
     pub(super) fn file(path: &Path, what: &str, error: &std::io::Error) -> Self {
-        let why = match error.kind() {
-            std::io::ErrorKind::NotFound => "there is no such file".to_owned(),
-            std::io::ErrorKind::PermissionDenied => "no permission".to_owned(),
-            _ => error.to_string(),
+        let why = if error.kind() == std::io::ErrorKind::NotFound {
+            "there is no such file".to_owned()
+        } else if error.kind() == std::io::ErrorKind::PermissionDenied {
+            "no permission".to_owned()
+        } else {
+            error.to_string()
         };
         Self::File(format!("cannot {what} {}: {why}", path.display()))
     }

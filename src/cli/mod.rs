@@ -18,7 +18,7 @@ use std::process::ExitCode;
 
 use clap::{Parser, Subcommand, ValueEnum};
 
-use failure::{Failure, Outcome};
+use failure::Outcome;
 
 /// Plans, counts and prices low-band receive antenna arrays, and writes the sheets to build them by
 #[derive(Debug, Parser)]

@@ -29,7 +29,11 @@ impl WorkOrder {
         let options: Vec<document::OptionInput<'_>> = work
             .results
             .iter()
-            .map(|result| document::OptionInput { design: &result.design, takeoff: &result.takeoff, bill: &result.bill })
+            .map(|result| document::OptionInput {
+                design: &result.design,
+                takeoff: &result.takeoff,
+                bill: &result.bill,
+            })
             .collect();
         let input = document::Input {
             project: &work.project,
@@ -43,12 +47,18 @@ impl WorkOrder {
         for (name, text) in &files {
             let path = self.output.join(name);
             if let Some(folder) = path.parent() {
-                fs::create_dir_all(folder).map_err(|error| Failure::file(folder, "make the folder", &error))?;
+                fs::create_dir_all(folder)
+                    .map_err(|error| Failure::file(folder, "make the folder", &error))?;
             }
             output::write_whole(&path, text)?;
         }
         let first = self.output.join("index.html");
-        output::text(&format!("{} files in {}; begin with {}\n", files.len(), self.output.display(), first.display()))?;
+        output::text(&format!(
+            "{} files in {}; begin with {}\n",
+            files.len(),
+            self.output.display(),
+            first.display()
+        ))?;
         Ok(work.outcome())
     }
 }

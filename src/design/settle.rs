@@ -55,13 +55,10 @@ struct Bench<'a> {
 pub fn settle(project: &Project, catalogue: &Catalogue) -> Settled {
     let mut problems = Problems::default();
     let mut designs = Vec::new();
-    let route_factor = match route_factor_on(project, catalogue) {
-        Some(factor) => factor,
-        None => {
-            problems.push(no_terrain_row(project.site.terrain));
-            Decimal::ONE
-        }
-    };
+    let route_factor = route_factor_on(project, catalogue).unwrap_or_else(|| {
+        problems.push(no_terrain_row(project.site.terrain));
+        Decimal::ONE
+    });
     let bench = Bench { project, catalogue, route_factor };
     for option in project.options() {
         let mut names = Names::default();

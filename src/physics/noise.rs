@@ -129,7 +129,7 @@ pub struct SystemNoise {
     pub snr_loss: Decibel,
 }
 
-/// System noise figure f = fa − 1 + l f_rx and the loss 10 log10(f/fa), all losses at the reference temperature.
+/// System noise figure `f = fa − 1 + l·f_rx` and the loss 10 log10(f/fa), all losses at the reference temperature.
 ///
 /// `antenna_loss` is how far the antenna's response lies below that of the lossless short vertical; `receiver` is the
 /// cascade from its terminals on (ITU-R P.372, from memory).

@@ -113,7 +113,7 @@ pub fn tension_for_sag(weight_n_per_m: f64, span_m: f64, sag_m: f64) -> Force {
     Force::new(weight_n_per_m * span_m * span_m / (8.0 * sag_m))
 }
 
-/// Sag in metres after warming by `rise_k` without elasticity: the wire's length grows by αΔT and the parabola's length
+/// Sag in metres after warming by `rise_k` without elasticity: the wire's length grows by `αΔT` and the parabola's length
 /// formula is turned round. A real wire relaxes and sags a little less. 0 when cooling takes up all the slack.
 pub fn sag_after_warming_m(span_m: f64, sag_cold_m: f64, expansion_per_k: f64, rise_k: f64) -> f64 {
     let length = (span_m + extra_length_m(span_m, sag_cold_m)) * (1.0 + expansion_per_k * rise_k);

@@ -49,8 +49,7 @@ pub enum Cell {
 impl Cell {
     fn json(&self) -> Value {
         match self {
-            Self::Number(value) => number(*value),
-            Self::Ceiling { value, .. } => number(*value),
+            Self::Number(value) | Self::Ceiling { value, .. } => number(*value),
             Self::Money(text) => json!(text),
             Self::None => Value::Null,
         }
@@ -58,9 +57,8 @@ impl Cell {
 
     fn text(&self) -> String {
         match self {
-            Self::Number(value) => value.normalize().to_string(),
             Self::Ceiling { value, ceiling } if value > ceiling => format!("> {ceiling}"),
-            Self::Ceiling { value, .. } => value.normalize().to_string(),
+            Self::Number(value) | Self::Ceiling { value, .. } => value.normalize().to_string(),
             Self::Money(text) => text.clone(),
             Self::None => "–".to_owned(),
         }

@@ -6,13 +6,13 @@ use std::process::{Command, Output};
 use serde_json::Value;
 
 /// A folder with a project, gone when dropped.
-pub struct ProjectTest {
+pub(crate) struct ProjectTest {
     folder: tempfile::TempDir,
 }
 
 impl ProjectTest {
     /// A project from its text.
-    pub fn new(text: &str) -> Self {
+    pub(crate) fn new(text: &str) -> Self {
         let folder = tempfile::tempdir().unwrap();
         std::fs::write(folder.path().join("project.toml"), text).unwrap();
         Self { folder }
@@ -20,7 +20,7 @@ impl ProjectTest {
 
     /// Another file beside it.
     #[must_use]
-    pub fn with(self, name: &str, text: &str) -> Self {
+    pub(crate) fn with(self, name: &str, text: &str) -> Self {
         let path = self.folder.path().join(name);
         std::fs::create_dir_all(path.parent().unwrap()).unwrap();
         std::fs::write(path, text).unwrap();
@@ -28,12 +28,12 @@ impl ProjectTest {
     }
 
     /// The folder.
-    pub fn path(&self) -> &Path {
+    pub(crate) fn path(&self) -> &Path {
         self.folder.path()
     }
 
     /// Runs a command on the project.
-    pub fn run(&self, arguments: &[&str]) -> Ran {
+    pub(crate) fn run(&self, arguments: &[&str]) -> Ran {
         let file = self.path().join("project.toml");
         let mut all = vec![arguments[0], file.to_str().unwrap()];
         all.extend(&arguments[1..]);
@@ -42,56 +42,56 @@ impl ProjectTest {
 }
 
 /// What a run of the program gave.
-pub struct Ran {
+pub(crate) struct Ran {
     output: Output,
 }
 
 impl Ran {
     /// Standard output.
-    pub fn stdout(&self) -> String {
+    pub(crate) fn stdout(&self) -> String {
         String::from_utf8(self.output.stdout.clone()).unwrap()
     }
 
     /// Standard error.
-    pub fn stderr(&self) -> String {
+    pub(crate) fn stderr(&self) -> String {
         String::from_utf8(self.output.stderr.clone()).unwrap()
     }
 
     /// The exit code.
-    pub fn code(&self) -> i32 {
+    pub(crate) fn code(&self) -> i32 {
         self.output.status.code().unwrap()
     }
 
     /// Fails unless the exit code is as expected.
     #[must_use]
-    pub fn exits(self, code: i32) -> Self {
+    pub(crate) fn exits(self, code: i32) -> Self {
         assert_eq!(self.code(), code, "stdout:\n{}\nstderr:\n{}", self.stdout(), self.stderr());
         self
     }
 
     /// Standard output as JSON.
-    pub fn json(&self) -> Value {
+    pub(crate) fn json(&self) -> Value {
         serde_json::from_str(&self.stdout()).unwrap()
     }
 }
 
 /// Runs the program.
-pub fn run(arguments: &[&str]) -> Ran {
+pub(crate) fn run(arguments: &[&str]) -> Ran {
     Ran { output: program().args(arguments).output().unwrap() }
 }
 
 /// The program, ready to be given arguments.
-pub fn program() -> Command {
+pub(crate) fn program() -> Command {
     Command::new(env!("CARGO_BIN_EXE_arraywright"))
 }
 
 /// A path below the repository.
-pub fn repository(path: &str) -> PathBuf {
+pub(crate) fn repository(path: &str) -> PathBuf {
     Path::new(env!("CARGO_MANIFEST_DIR")).join(path)
 }
 
 /// The demo projects by folder name.
-pub fn demos() -> Vec<PathBuf> {
+pub(crate) fn demos() -> Vec<PathBuf> {
     let mut demos: Vec<PathBuf> =
         std::fs::read_dir(repository("demo-projects")).unwrap().map(|entry| entry.unwrap().path()).collect();
     demos.sort();
