@@ -33,6 +33,8 @@ pub struct Row {
 pub enum Cell {
     /// A number.
     Number(Decimal),
+    /// A figure to one decimal.
+    Figure(Decimal),
     /// Money, exact text.
     Money(String),
     /// A number above which only "more than" is honest.
@@ -49,7 +51,7 @@ pub enum Cell {
 impl Cell {
     fn json(&self) -> Value {
         match self {
-            Self::Number(value) | Self::Ceiling { value, .. } => number(*value),
+            Self::Number(value) | Self::Figure(value) | Self::Ceiling { value, .. } => number(*value),
             Self::Money(text) => json!(text),
             Self::None => Value::Null,
         }
@@ -58,7 +60,8 @@ impl Cell {
     fn text(&self) -> String {
         match self {
             Self::Ceiling { value, ceiling } if value > ceiling => format!("> {ceiling}"),
-            Self::Number(value) | Self::Ceiling { value, .. } => value.normalize().to_string(),
+            Self::Figure(value) | Self::Ceiling { value, .. } => format!("{value:.1}"),
+            Self::Number(value) => value.normalize().to_string(),
             Self::Money(text) => text.clone(),
             Self::None => "–".to_owned(),
         }
@@ -132,7 +135,7 @@ fn tenths(value: f64) -> Decimal {
 }
 
 fn tenth(value: f64) -> Cell {
-    if value.is_finite() { Cell::Number(tenths(value)) } else { Cell::None }
+    if value.is_finite() { Cell::Figure(tenths(value)) } else { Cell::None }
 }
 
 /// Money for each dB of RDF above the cheapest option; nothing where an option hears no better.

@@ -89,11 +89,12 @@ fn explain_item(sheet: &mut Sheet, item: &Item) {
 fn explain_line(sheet: &mut Sheet, line: &BillLine) {
     let amount = line.amount.map_or_else(|| "unpriced".to_owned(), |amount| amount.to_string());
     sheet.answer.push(format!(
-        "{}  {}: needed {} {}, bought {}, left over {}, amount {amount}",
+        "{}  {}: needed {} {}, from stock {}, bought {}, left over {}, amount {amount}",
         line.part,
         line.description,
         line.needed.normalize(),
         line.unit,
+        line.on_hand.normalize(),
         line.bought.normalize(),
         line.left.normalize(),
     ));

@@ -89,9 +89,9 @@ fn money_never_meets_a_float() {
         let mut files = Vec::new();
         let path = repository(folder);
         if path.is_dir() {
-            sources(&path, &mut files)
+            sources(&path, &mut files);
         } else {
-            files.push(path)
+            files.push(path);
         }
         for file in files {
             let text = std::fs::read_to_string(&file).unwrap();

@@ -12,6 +12,7 @@ use rust_decimal::Decimal;
 
 /// A composition with its numbers.
 #[derive(Clone, Debug)]
+#[expect(clippy::struct_excessive_bools, reason = "each is one switch of a random project")]
 struct Composition {
     wires: bool,
     length_dm: i64,
@@ -267,7 +268,9 @@ proptest! {
             .iter()
             .map(|takeoff| takeoff.pieces.iter().map(|piece| piece.cut).collect())
             .collect();
-        cuts.iter_mut().for_each(|list| list.sort());
+        for list in &mut cuts {
+            list.sort();
+        }
         prop_assert_eq!(&cuts[0], &cuts[1]);
     }
 }
