@@ -12,18 +12,19 @@ use arraywright::report::document::{self, Input, OptionInput, TemplateError};
 use arraywright::takeoff::{self, Takeoff};
 
 /// A name that would break out of every format if it were not escaped.
-pub const HOSTILE: &str = "</style><script>alert(1)</script> \"q\" 'a' | `b` \\ <b>#1</b> *x* _y_ [z](u)";
+pub(crate) const HOSTILE: &str =
+    "</style><script>alert(1)</script> \"q\" 'a' | `b` \\ <b>#1</b> *x* _y_ [z](u)";
 
 /// Everything worked out for one project file.
-pub struct Sample {
-    pub project: Project,
-    pub catalogue: Catalogue,
+pub(crate) struct Sample {
+    pub(crate) project: Project,
+    pub(crate) catalogue: Catalogue,
     results: Vec<(Design, Takeoff, Bill)>,
 }
 
 impl Sample {
     /// Works out a project text with the built-in catalogue.
-    pub fn new(name: &str, text: &str, stock: Option<(&str, &str)>) -> Self {
+    pub(crate) fn new(name: &str, text: &str, stock: Option<(&str, &str)>) -> Self {
         Self::of(name, read(name, text, stock), catalogue::built_in())
     }
 
@@ -41,7 +42,7 @@ impl Sample {
     }
 
     /// A demo project by its folder's name.
-    pub fn demo(folder: &str) -> Self {
+    pub(crate) fn demo(folder: &str) -> Self {
         let path = demo_folder().join(folder);
         let text = fs::read_to_string(path.join("project.toml")).expect("a demo project");
         let stock = fs::read_to_string(path.join("on-hand.csv")).ok();
@@ -49,12 +50,12 @@ impl Sample {
     }
 
     /// Renders every sheet.
-    pub fn render(&self) -> BTreeMap<String, String> {
+    pub(crate) fn render(&self) -> BTreeMap<String, String> {
         self.render_with(&BTreeMap::new()).expect("our own templates work")
     }
 
     /// Renders every sheet with some templates replaced.
-    pub fn render_with(
+    pub(crate) fn render_with(
         &self,
         overrides: &BTreeMap<String, String>,
     ) -> Result<BTreeMap<String, String>, TemplateError> {
@@ -80,7 +81,7 @@ fn read(name: &str, text: &str, stock: Option<(&str, &str)>) -> Project {
 }
 
 /// Every demo project's folder name.
-pub fn demos() -> Vec<String> {
+pub(crate) fn demos() -> Vec<String> {
     let entries = fs::read_dir(demo_folder()).expect("the demo projects");
     let mut names: Vec<String> = entries
         .map(|entry| entry.expect("an entry").path())
@@ -100,7 +101,7 @@ fn demo_folder() -> PathBuf {
 /// price is missing, and names that attack every format.
 ///
 /// The reader refuses most of such names; the sheets must not depend on that.
-pub fn hostile() -> Sample {
+pub(crate) fn hostile() -> Sample {
     let mut project = read("hostile.toml", HOSTILE_PROJECT, None);
     project.title =
         format!("{HOSTILE} and a title so long that it has to be cut in the running head of the page");

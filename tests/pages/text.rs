@@ -56,17 +56,17 @@ fn a_hostile_name_stays_text_in_markdown() {
     for (name, text) in hostile().render().iter().filter(|(name, _)| name.ends_with(".md")) {
         assert!(!text.contains("<script") && !text.contains("<b>"), "{name}");
         assert!(!text.contains("| `b`") && !text.contains("[z](u)"), "{name}");
-        assert!(tables_are_whole(text), "{name} has a row with another number of cells than its head");
+        assert_eq!(torn_row(text), None, "{name} has a row with another number of cells than its head");
     }
     for demo in demos() {
         for (name, text) in Sample::demo(&demo).render().iter().filter(|(name, _)| name.ends_with(".md")) {
-            assert!(tables_are_whole(text), "{demo}: {name}");
+            assert_eq!(torn_row(text), None, "{demo}: {name}");
         }
     }
 }
 
-/// Every row of every table has as many cells as the table's first row.
-fn tables_are_whole(text: &str) -> bool {
+/// The first row of a table that has not as many cells as the table's head.
+fn torn_row(text: &str) -> Option<&str> {
     let mut cells = None;
     for line in text.lines() {
         if !line.starts_with('|') {
@@ -75,10 +75,10 @@ fn tables_are_whole(text: &str) -> bool {
         }
         let bars = line.replace("\\\\", "").replace("\\|", "").matches('|').count();
         if *cells.get_or_insert(bars) != bars {
-            return false;
+            return Some(line);
         }
     }
-    true
+    None
 }
 
 #[test]

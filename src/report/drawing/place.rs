@@ -89,16 +89,18 @@ impl Taken {
         self.area.holds(rect) && !self.rects.iter().any(|taken| taken.meets(rect))
     }
 
-    /// A place for a text near `at`, with its anchor, and takes it: nearest first, clear of lines before merely clear
-    /// of other texts. Nothing when the neighbourhood is full.
-    pub(super) fn text(&mut self, at: Point, nearest: f64, kind: Type, text: &str) -> Option<Label> {
-        let (width, height) = (kind.width(text), kind.size * 1.15);
+    /// A place near `at` for some lines of text, with their anchor, and takes it: nearest first, clear of lines before
+    /// merely clear of other texts. Nothing when the neighbourhood is full.
+    pub(super) fn text(&mut self, at: Point, nearest: f64, kind: Type, lines: &[&str]) -> Option<Label> {
+        let width = lines.iter().map(|line| kind.width(line)).fold(0.0, f64::max);
+        let (height, below) = (kind.size * 1.15, kind.leading() * f64_of(lines.len().saturating_sub(1)));
         let mut second = None;
         for ring in [0.0, 2.5, 5.0, 8.0, 12.0, 17.0] {
             for (dx, dy) in COMPASS {
                 let reach = nearest + ring;
                 let anchor = anchor_of(dx);
-                let spot = (at.0 + dx * reach, at.1 + dy * reach + 0.35 * kind.size);
+                let spot =
+                    (at.0 + dx * reach, at.1 + dy * reach + 0.35 * kind.size - 0.5 * below * (1.0 - dy));
                 let left = match anchor {
                     Anchor::Start => spot.0,
                     Anchor::Middle => spot.0 - width / 2.0,
@@ -108,7 +110,7 @@ impl Taken {
                     left: left - 0.4,
                     top: spot.1 - 0.85 * height,
                     right: left + width + 0.4,
-                    bottom: spot.1 + 0.3 * height,
+                    bottom: spot.1 + 0.3 * height + below,
                 };
                 if !self.clear_of_rects(rect) {
                     continue;
@@ -151,6 +153,11 @@ const COMPASS: [(f64, f64); 12] = [
     (-0.4, -0.95),
     (-0.4, 0.95),
 ];
+
+#[expect(clippy::cast_precision_loss, reason = "a few lines")]
+fn f64_of(count: usize) -> f64 {
+    count as f64
+}
 
 fn anchor_of(dx: f64) -> Anchor {
     if dx > 0.1 {

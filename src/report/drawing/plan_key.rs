@@ -51,7 +51,7 @@ impl Stroke {
 
 /// Draws the key of what the plan shows; returns the height it took.
 pub(super) fn draw_key(svg: &mut Svg, left: f64, signs: &[Sign], strokes: &[Stroke]) -> f64 {
-    const ROW: f64 = 7.6;
+    const ROW: f64 = 8.0;
     svg.text((left, 5.0), Type::bold(3.9), "What the signs mean");
     let mut y = 12.0;
     for sign in signs {
@@ -62,7 +62,7 @@ pub(super) fn draw_key(svg: &mut Svg, left: f64, signs: &[Sign], strokes: &[Stro
     for stroke in strokes {
         stroke.draw(svg, (left, y), (left + 10.0, y));
         svg.text((left + 12.0, y + 1.2), Type::plain(3.2), stroke.words());
-        y += ROW - 2.0;
+        y += 6.0;
     }
     y
 }

@@ -2,11 +2,14 @@
 
 use std::collections::BTreeSet;
 
+use super::board::{Board, apart, centroid, normal};
 use super::ground::Ground;
 use super::place::{Point as Paper, Rect, Taken};
+use super::plan_dimension::draw_dimensions;
 use super::plan_key::{Stroke, draw_key, draw_north, draw_scale_bar};
+use super::plan_land::{draw_land, draw_names_of_land};
 use super::sign::{self, Sign};
-use super::svg::{Anchor, Svg, Type, num};
+use super::svg::{Svg, Type, num};
 use crate::design::Design;
 use crate::plan::{ArrayPlan, Fixture, LineRole, Point, PointKind, SitePosition};
 use crate::project::Project;
@@ -33,7 +36,7 @@ pub fn draw(project: &Project, design: &Design, control: ControlCable) -> String
     let mut svg = Svg::new(SHEET.0, SHEET.1, "sp");
     svg.hatches();
     let mut board = Board { svg, taken: Taken::new(AREA), ground: scene.ground, area: AREA };
-    draw_keep_outs(&mut board, project);
+    draw_land(&mut board, project);
     draw_lines(&mut board, design, control);
     draw_dimensions(&mut board, design);
     scene.draw_signs(&mut board);
@@ -42,8 +45,7 @@ pub fn draw(project: &Project, design: &Design, control: ControlCable) -> String
         draw_beam(&mut board, &array.plan, project.site.declination);
     }
     scene.draw_names(&mut board);
-    draw_line_names(&mut board, design);
-    scene.draw_receiver_far(&mut board, project);
+    draw_line_names(&mut board, design, scene.receiver_on_plan);
     draw_names_of_land(&mut board, project);
     let mut svg = board.svg;
     let strokes = strokes_used(design, control);
@@ -51,32 +53,6 @@ pub fn draw(project: &Project, design: &Design, control: ControlCable) -> String
     svg = draw_detail(svg, &scene, design, foot);
     draw_scale_bar(&mut svg, COLUMN, 141.0, &scene.ground);
     svg.finish("Site plan, true north up; every place on it stands in the table of stakes")
-}
-
-/// A drawing board: what is drawn, what is taken, how the site lies on it.
-struct Board {
-    svg: Svg,
-    taken: Taken,
-    ground: Ground,
-    area: Rect,
-}
-
-impl Board {
-    fn line(&mut self, stroke: Stroke, a: Paper, b: Paper) {
-        if let Some((a, b)) = self.area.clip(a, b) {
-            stroke.draw(&mut self.svg, a, b);
-            self.taken.line(a, b);
-        }
-    }
-
-    fn label(&mut self, at: Paper, nearest: f64, kind: Type, text: &str) {
-        let Some(label) = self.taken.text(at, nearest, kind, text) else { return };
-        if label.far {
-            let end = (label.at.0, label.at.1 - 0.35 * kind.size);
-            self.svg.line(at, end, 0.13, "");
-        }
-        self.svg.text(label.at, kind.at(label.anchor).haloed(), text);
-    }
 }
 
 /// The points of an option, each once.
@@ -128,32 +104,8 @@ impl<'a> Scene<'a> {
         for point in self.points.iter().filter(|point| point.kind != PointKind::Post) {
             let at = self.ground.paper(point.site);
             let half = sign_of(point).half() * if self.crowded(point) { 0.5 } else { 1.0 };
-            board.label(at, half + 1.4, Type::bold(3.9), &point.name);
+            board.label(at, half + 1.4, Type::bold(3.9), &[&point.name]);
         }
-    }
-
-    fn draw_receiver_far(&self, board: &mut Board, project: &Project) {
-        let receiver: SitePosition = project.site.receiver.into();
-        if self.receiver_on_plan {
-            return;
-        }
-        let mut from: Vec<&&Point> = self.points.iter().filter(|p| p.kind == PointKind::Hub).collect();
-        if from.is_empty() {
-            from = self.points.iter().collect();
-        }
-        let distance = |point: &&&Point| point.site.distance_m(receiver);
-        let Some(nearest) = from.into_iter().min_by(|a, b| distance(&a).total_cmp(&distance(&b))) else {
-            return;
-        };
-        let (a, b) = (self.ground.paper(nearest.site), self.ground.paper(receiver));
-        let Some((_, edge)) = board.area.clip(a, b) else { return };
-        let words = format!(
-            "to RX: {:.2} m at {} from {}",
-            nearest.site.distance_m(receiver),
-            nearest.site.bearing_to(receiver),
-            nearest.name
-        );
-        board.label(edge, 2.0, Type::bold(3.2), &words);
     }
 
     fn signs_used(&self) -> Vec<Sign> {
@@ -238,88 +190,6 @@ fn draw_lines(board: &mut Board, design: &Design, control: ControlCable) {
     }
 }
 
-/// The unit vector to the right of a line on paper; nothing to the right of a point.
-fn normal(a: Paper, b: Paper) -> Paper {
-    let (dx, dy) = (b.0 - a.0, b.1 - a.1);
-    let length = (dx * dx + dy * dy).sqrt();
-    if length > 0.0 { (-dy / length, dx / length) } else { (0.0, 0.0) }
-}
-
-fn apart(a: Paper, b: Paper) -> f64 {
-    ((b.0 - a.0).powi(2) + (b.1 - a.1).powi(2)).sqrt()
-}
-
-fn angle(a: Paper, b: Paper) -> f64 {
-    libm::atan2(b.1 - a.1, b.0 - a.0).to_degrees()
-}
-
-/// The length of every wire along it, and the distance between neighbours outside the array.
-fn draw_dimensions(board: &mut Board, design: &Design) {
-    let kind = Type::plain(3.2).at(Anchor::Middle).haloed();
-    for plan in design.arrays.iter().map(|array| &array.plan) {
-        for span in &plan.layout.spans {
-            let name = &plan.layout.elements[span.element.0].name;
-            let (a, b) = (plan.layout.point(span.from).site, plan.layout.point(span.to).site);
-            let (a, b) = (board.ground.paper(a), board.ground.paper(b));
-            let at = (a.0 + 0.62 * (b.0 - a.0), a.1 + 0.62 * (b.1 - a.1));
-            let words = format!("{name}: {}", span.length);
-            if kind.width(&words) < apart(a, b) {
-                board.svg.turned_text(at, angle(a, b), 1.2, kind, &words);
-            }
-        }
-        let middle = centroid(plan);
-        for pair in plan.layout.elements.windows(2) {
-            let site = |n: usize| plan.layout.point(pair[n].feed_point).site;
-            dimension(board, site(0), site(1), board.ground.paper(middle));
-        }
-    }
-}
-
-/// A dimension line 9 mm off, on the side away from `middle`.
-fn dimension(board: &mut Board, from: SitePosition, to: SitePosition, middle: Paper) {
-    let (a, b) = (board.ground.paper(from), board.ground.paper(to));
-    let words = Length::from_metres_nearest(from.distance_m(to)).to_string();
-    let kind = Type::plain(3.2).at(Anchor::Middle).haloed();
-    if apart(a, b) < kind.width(&words) + 2.0 {
-        return;
-    }
-    let (nx, ny) = normal(a, b);
-    let half = (f64::midpoint(a.0, b.0), f64::midpoint(a.1, b.1));
-    let outward = if (half.0 - middle.0) * nx + (half.1 - middle.1) * ny < 0.0 { -9.0 } else { 9.0 };
-    let off = |p: Paper, by: f64| (p.0 + nx * by, p.1 + ny * by);
-    let (c, d) = (off(a, outward), off(b, outward));
-    if !board.area.holds(Rect::about(c, 1.0, 1.0)) || !board.area.holds(Rect::about(d, 1.0, 1.0)) {
-        return;
-    }
-    for (start, end) in [(a, c), (b, d)] {
-        let (ux, uy) = (nx * outward.signum(), ny * outward.signum());
-        board.svg.line(
-            (start.0 + 4.0 * ux, start.1 + 4.0 * uy),
-            (end.0 + 1.2 * ux, end.1 + 1.2 * uy),
-            0.13,
-            "",
-        );
-        board.svg.line((end.0 - 0.9, end.1 + 0.9), (end.0 + 0.9, end.1 - 0.9), 0.35, "");
-    }
-    board.svg.line(c, d, 0.18, "");
-    board.taken.line(c, d);
-    let at = (f64::midpoint(c.0, d.0), f64::midpoint(c.1, d.1));
-    board.svg.turned_text(at, angle(c, d), 1.0, kind, &words);
-    board.taken.rect(Rect::about(at, 5.0, 5.0));
-}
-
-/// The middle of everything but the receiver.
-fn centroid(plan: &ArrayPlan) -> SitePosition {
-    let places: Vec<_> = plan
-        .layout
-        .points
-        .iter()
-        .filter(|point| point.kind != PointKind::Receiver)
-        .map(|point| point.at)
-        .collect();
-    plan.layout.frame.to_site(crate::plan::Position::mean(&places))
-}
-
 /// A hollow arrow toward where the array listens, with the bearing in words.
 fn draw_beam(board: &mut Board, plan: &ArrayPlan, declination: Option<Angle>) {
     let middle = board.ground.paper(centroid(plan));
@@ -340,97 +210,47 @@ fn draw_beam(board: &mut Board, plan: &ArrayPlan, declination: Option<Angle>) {
         num(bearing.degrees())
     ));
     board.taken.rect(Rect::about(at, 9.0, 11.0));
-    let states = &plan.feed.switch.states;
-    let words = match states.len() {
-        0 | 1 => format!("listens {} true", bearing),
-        n => format!("first of {n}: {} true", bearing),
+    let words = match plan.feed.switch.states.len() {
+        0 | 1 => format!("listens {bearing} true"),
+        n => format!("first of {n}: {bearing} true"),
     };
-    board.label(at, 11.0, Type::bold(3.9), &words);
-    if let Some(angle) = declination {
-        let compass = Bearing::from_degrees(bearing.degrees() - angle.degrees());
-        board.label(at, 11.0, Type::plain(3.9), &format!("{compass} compass"));
-    }
+    let compass = declination
+        .map(|angle| format!("{} compass", Bearing::from_degrees(bearing.degrees() - angle.degrees())));
+    let lines: Vec<&str> = std::iter::once(words.as_str()).chain(compass.as_deref()).collect();
+    board.label(at, 11.0, Type::bold(3.9), &lines);
 }
 
-fn draw_line_names(board: &mut Board, design: &Design) {
+fn draw_line_names(board: &mut Board, design: &Design, receiver_on_plan: bool) {
     let kind = Type::plain(3.2);
     for array in &design.arrays {
         let plan = &array.plan;
         for (line, length) in plan.feed.lines.iter().zip(&array.lengths) {
-            let site = |id| plan.layout.point(id).site;
-            let (a, b) =
-                (board.ground.paper(site(line.termini.from)), board.ground.paper(site(line.termini.to)));
-            let Some((a, b)) = board.area.clip(a, b) else { continue };
-            if apart(a, b) >= 12.0 {
+            let (from, to) = (plan.layout.point(line.termini.from), plan.layout.point(line.termini.to));
+            let ends = board.area.clip(board.ground.paper(from.site), board.ground.paper(to.site));
+            let Some((a, b)) = ends else { continue };
+            if to.kind == PointKind::Receiver && !receiver_on_plan {
+                let away = format!("{} to RX: {:.2} m", line.label, from.site.distance_m(to.site));
+                let toward = format!("at {} true from {}", from.site.bearing_to(to.site), from.name);
+                board.label(b, 2.5, Type::bold(3.2), &[&away, &toward]);
+            } else if apart(a, b) >= 12.0 {
                 let middle = (f64::midpoint(a.0, b.0), f64::midpoint(a.1, b.1));
-                board.label(middle, 1.6, kind, &format!("{} {}", line.label, length.finished));
+                board.label(middle, 1.6, kind, &[&format!("{} {}", line.label, length.finished)]);
             }
-        }
-    }
-}
-
-fn draw_keep_outs(board: &mut Board, project: &Project) {
-    for keep_out in &project.keep_out {
-        let corners: Vec<String> = keep_out
-            .polygon
-            .iter()
-            .map(|corner| {
-                let at = board.ground.paper((*corner).into());
-                // The sheet's edge cuts an area that is larger than the plan.
-                let x = at.0.clamp(board.area.left, board.area.right);
-                let y = at.1.clamp(board.area.top, board.area.bottom);
-                format!("{},{}", num(x), num(y))
-            })
-            .collect();
-        let fill = board.svg.id("cross");
-        board.svg.raw(&format!(
-            r##"<polygon points="{}" fill="url(#{fill})" stroke="#000" stroke-width=".7" stroke-dasharray="6 1.2 1.2 1.2"/>"##,
-            corners.join(" ")
-        ));
-    }
-    for crossing in &project.crossings {
-        let at = board.ground.paper(crossing.at.into());
-        if board.area.holds(Rect::about(at, 2.0, 2.0)) {
-            let (x, y) = (num(at.0 - 2.0), num(at.1 - 2.0));
-            board.svg.stroke(&format!("M{x} {y}l4 4m0 -4l-4 4"), 0.5, "");
-            board.taken.rect(Rect::about(at, 2.0, 2.0));
-        }
-    }
-}
-
-fn draw_names_of_land(board: &mut Board, project: &Project) {
-    for keep_out in &project.keep_out {
-        let corners: Vec<Paper> =
-            keep_out.polygon.iter().map(|corner| board.ground.paper((*corner).into())).collect();
-        let count = f64::from(u32::try_from(corners.len()).unwrap_or(1).max(1));
-        let sum = corners.iter().fold((0.0, 0.0), |sum, c| (sum.0 + c.0, sum.1 + c.1));
-        let at = (
-            (sum.0 / count).clamp(board.area.left + 5.0, board.area.right - 5.0),
-            (sum.1 / count).clamp(board.area.top + 5.0, board.area.bottom - 5.0),
-        );
-        board.label(at, 0.0, Type::bold(3.2), &format!("KEEP OUT: {}", keep_out.name));
-    }
-    for crossing in &project.crossings {
-        let at = board.ground.paper(crossing.at.into());
-        if board.area.holds(Rect::about(at, 2.0, 2.0)) {
-            let words = format!("{}, {} wide", crossing.kind, crossing.width);
-            board.label(at, 3.0, Type::plain(3.2), &words);
         }
     }
 }
 
 /// The first crowd of signs once more, larger, under the key.
 fn draw_detail(mut svg: Svg, scene: &Scene<'_>, design: &Design, foot: f64) -> Svg {
-    let Some(first) = scene.points.iter().find(|p| p.kind != PointKind::Post && scene.crowded(p)) else {
-        return svg;
-    };
-    let area = Rect { left: COLUMN, top: foot + 4.0, right: SHEET.0 - 0.5, bottom: 132.0 };
-    if area.bottom - area.top < 34.0 {
-        return svg;
-    }
-    let members = crowd_of(scene, first);
-    let places: Vec<SitePosition> = members.iter().map(|point| point.site).collect();
-    let ground = Ground::fitting(&places, area, 12.0);
+    let area = Rect { left: COLUMN, top: foot + 4.0, right: SHEET.0 - 0.5, bottom: 133.0 };
+    let crowded = scene.points.iter().filter(|p| p.kind != PointKind::Post && scene.crowded(p));
+    let found = crowded.map(|first| crowd_of(scene, first)).find_map(|members| {
+        let places: Vec<SitePosition> = members.iter().map(|point| point.site).collect();
+        let apart = places.iter().any(|place| place.distance_m(places[0]) > 1.0);
+        let ground = Ground::fitting(&places, area, 9.0);
+        (apart && ground.denominator <= 0.6 * scene.ground.denominator).then_some((members, ground))
+    });
+    let Some((members, ground)) = found.filter(|_| area.bottom - area.top >= 30.0) else { return svg };
     let title = format!("Close up, 1 : {:.0}", ground.denominator);
     svg.rect((area.left, area.top), (area.right - area.left, area.bottom - area.top), "none", 0.25);
     svg.text((area.left, area.top - 1.2), Type::bold(3.2), &title);
@@ -441,7 +261,7 @@ fn draw_detail(mut svg: Svg, scene: &Scene<'_>, design: &Design, foot: f64) -> S
     }
     for point in &members {
         let at = ground.paper(point.site);
-        board.label(at, sign_of(point).half() + 1.2, Type::bold(3.6), &point.name);
+        board.label(at, sign_of(point).half() + 1.2, Type::bold(3.6), &[&point.name]);
     }
     for (n, a) in members.iter().enumerate() {
         for b in members.iter().skip(n + 1).filter(|b| b.kind == a.kind && a.kind == PointKind::FeedPoint) {
@@ -449,7 +269,7 @@ fn draw_detail(mut svg: Svg, scene: &Scene<'_>, design: &Design, foot: f64) -> S
             let other = ground.paper(b.site);
             let middle = (f64::midpoint(middle.0, other.0), f64::midpoint(middle.1, other.1));
             let metres = Length::from_metres_nearest(a.site.distance_m(b.site));
-            board.label(middle, 3.0, Type::plain(3.2), &format!("{} to {}: {metres}", a.name, b.name));
+            board.note(middle, 3.0, Type::plain(3.2), &format!("{} to {}: {metres}", a.name, b.name));
         }
     }
     board.svg

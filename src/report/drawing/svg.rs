@@ -69,6 +69,11 @@ impl Type {
         Self { halo: Halo::White, ..self }
     }
 
+    /// From one line of text to the next in millimetres.
+    pub(super) const fn leading(self) -> f64 {
+        self.size * 1.25
+    }
+
     /// How wide a text comes out in a wide font, in millimetres (0.62 and 0.72 of the size a letter, measured on DejaVu
     /// Sans with a margin).
     #[expect(clippy::cast_precision_loss, reason = "texts are short")]
