@@ -54,21 +54,11 @@ fn answer(check: &Check) -> Option<Answers> {
             let z = input_impedance(ohms(check, "z0"), load, length);
             Some(computed([("z_in_re", z.re), ("z_in_im", z.im)]))
         }
-        "match-magic-t" => Some(hybrid_parts(check)),
-        "match-null-amplitude" => {
-            let error = Decibel::new(check.number("amplitude_error"));
-            Some(computed([("null_depth", amplitude_error_null(error).db())]))
-        }
-        "match-combiner-noise" => {
-            let change = dead_input_change(check.count("inputs"), check.count("dead_inputs"));
-            Some(computed([("signal_change", change.db())]))
-        }
         "match-choke" => {
             let choke = Complex64::from(check.number("z_choke_r"));
             let path = Complex64::from(check.number("z_path"));
             Some(computed([("current_reduction", choke_reduction(choke, path).db())]))
         }
-        _ if id.starts_with("match-wilkinson-") => dividers(check),
         _ if id.starts_with("match-turns-") => {
             let (high, low) = (ohms(check, "z_high"), ohms(check, "z_low"));
             let ratio = impedance_ratio(high, low);
@@ -78,6 +68,23 @@ fn answer(check: &Check) -> Option<Answers> {
             let load = Complex64::from(check.number("z_load"));
             Some(reflection(Reflection::of(load, ohms(check, "z0"))))
         }
+        _ => combiners(check),
+    }
+}
+
+fn combiners(check: &Check) -> Option<Answers> {
+    let id = check.id.as_str();
+    match id {
+        "match-magic-t" => Some(hybrid_parts(check)),
+        "match-null-amplitude" => {
+            let error = Decibel::new(check.number("amplitude_error"));
+            Some(computed([("null_depth", amplitude_error_null(error).db())]))
+        }
+        "match-combiner-noise" => {
+            let change = dead_input_change(check.count("inputs"), check.count("dead_inputs"));
+            Some(computed([("signal_change", change.db())]))
+        }
+        _ if id.starts_with("match-wilkinson-") => dividers(check),
         _ if id.starts_with("match-combine-phase-") => {
             let error = Angle::from_degrees(check.number("phase_error"));
             Some(computed([
