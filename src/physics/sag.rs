@@ -59,8 +59,8 @@ impl Span {
     /// The tension after a change of temperature of an elastic wire strung at this one.
     ///
     /// Solves 1 + s₁ = (1 + α·ΔT)(1 + (H₁ − H₀)/(EA))(1 + s₀) by halving, with the parabola's slack s = w²L²/(24H²)
-    /// (the usual change-of-state equation of overhead lines, from memory); all bays alike and the wire free to slide. Creep and the give of posts are left out, so a real wire
-    /// pulls less in the cold.
+    /// (the usual change-of-state equation of overhead lines, from memory); all bays alike and the wire free to slide.
+    /// Creep and the give of posts are left out, so a real wire pulls less in the cold.
     pub fn tension_after(self, elastic: Elastic, rise_k: f64) -> Force {
         let load = (self.weight_n_per_m * self.length_m).powi(2) / 24.0;
         let before = self.tension.newtons();
