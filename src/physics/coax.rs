@@ -110,6 +110,23 @@ mod tests {
     }
 
     #[test]
+    fn solid_copper_foam_cable_at_the_low_bands() {
+        // Velocity 0.8141 at 1.83 and 0.8193 at 4.1 MHz; loss 0.8, 1.1, 1.6 and 1.9 dB/100 m at 1.8, 3.6, 7 and 10 MHz.
+        let shape =
+            IdealCoax { inner_diameter_m: 1.0236e-3, outer_diameter_m: 4.572e-3, permittivity: 1.4516 };
+        let coax = LossyCoax { shape, loss_tangent: 0.0, outer: Conductor::COPPER };
+        let line = |mhz: f64| {
+            let f = Frequency::from_mhz(mhz);
+            let line = coax.constants(round_wire(Conductor::COPPER, 0.5118e-3, f), f).line;
+            (line.velocity_factor(f), line.loss().db_per_100m())
+        };
+        assert!((line(1.83).0 - 0.8141).abs() < 1e-4 && (line(4.1).0 - 0.8193).abs() < 1e-4);
+        for (mhz, loss) in [(1.8, 0.8), (3.6, 1.1), (7.0, 1.6), (10.0, 1.9)] {
+            assert!((line(mhz).1 - loss).abs() < 0.06, "{mhz} MHz");
+        }
+    }
+
+    #[test]
     fn loss_of_real_conductors_nears_r_over_twice_z0() {
         let shape = IdealCoax { inner_diameter_m: 1.02e-3, outer_diameter_m: 4.57e-3, permittivity: 1.45 };
         let coax = LossyCoax { shape, loss_tangent: 0.0, outer: Conductor::COPPER };

@@ -129,10 +129,10 @@ pub struct SystemNoise {
     pub snr_loss: Decibel,
 }
 
-/// System noise figure `f = fa − 1 + l·f_rx` and the loss 10 log10(f/fa), all losses at the reference temperature.
+/// System noise figure f = fa − 1 + l·fr and the loss 10 log10(f/fa), all losses at the reference temperature.
 ///
 /// `antenna_loss` is how far the antenna's response lies below that of the lossless short vertical; `receiver` is the
-/// cascade from its terminals on (ITU-R P.372, from memory).
+/// cascade fr from its terminals on (ITU-R P.372, from memory).
 pub fn system_noise(external: Decibel, antenna_loss: Decibel, receiver: Decibel) -> SystemNoise {
     let fa = power_ratio(external.db());
     let factor = fa - 1.0 + power_ratio(antenna_loss.db()) * power_ratio(receiver.db());

@@ -1,7 +1,5 @@
 //! Array factors of two elements in line, and how errors spoil their null.
 
-use std::f64::consts::FRAC_PI_2;
-
 use super::voltage_db;
 use crate::units::{Angle, Decibel, ElectricalLength, Frequency};
 
@@ -57,11 +55,11 @@ impl InlinePair {
     }
 
     /// Forward over rearward response of a crossfire with d = s whose rear leg is wrong in size and in length:
-    /// 20 log10(2 sin ks / √(ε² + (kΔ)²)), ε = 10^(dB/20) − 1. For small errors and s below a quarter wave.
+    /// 20 log10(2 sin ks / √(ε² + (kΔ)²)), ε = 10^(dB/20) − 1. For errors small against one; infinite without any.
     pub fn front_to_back(self, amplitude_error: Decibel, length_error_m: f64) -> Decibel {
         let epsilon = 10f64.powf(amplitude_error.db() / 20.0) - 1.0;
         let phase = self.frequency.wavenumber() * length_error_m;
-        let forward = 2.0 * self.spacing_phase().radians().min(FRAC_PI_2).sin();
+        let forward = 2.0 * self.spacing_phase().radians().sin().abs();
         Decibel::new(voltage_db(forward / epsilon.hypot(phase)))
     }
 }

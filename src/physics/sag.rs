@@ -10,11 +10,11 @@ pub const COPPER_MODULUS_PA: f64 = 117e9;
 /// A wire between two supports of one height.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Span {
-    /// Weight of the wire in newtons a metre, ice and wind included where they matter.
+    /// Weight of the wire in newtons a metre, above 0; ice and wind included where they matter.
     pub weight_n_per_m: f64,
     /// Distance between the supports in metres.
     pub length_m: f64,
-    /// Horizontal tension.
+    /// Horizontal tension, above 0.
     pub tension: Force,
 }
 
@@ -29,9 +29,9 @@ impl Span {
         self.half() * self.length_m / 4.0
     }
 
-    /// Sag in metres by the catenary, (H/w)(cosh(wL/2H) − 1).
+    /// Sag in metres by the catenary, (H/w)(cosh(wL/2H) − 1), written with sinh² so that tight wires keep their digits.
     pub fn catenary_sag_m(self) -> f64 {
-        self.length_m * (self.half().cosh() - 1.0) / (2.0 * self.half())
+        self.length_m * (self.half() / 2.0).sinh().powi(2) / self.half()
     }
 
     /// Length of wire in metres by the parabola, L + 8S²/(3L).
@@ -58,9 +58,9 @@ impl Span {
 
     /// The tension after a change of temperature of an elastic wire strung at this one.
     ///
-    /// Solves (1 + H₁-slack) = (1 + α ΔT)(1 + (H₁ − H₀)/(EA))(1 + H₀-slack), slack w²L²/(24H²) by the parabola, by
-    /// halving; all bays alike and the wire free to slide. Creep and the give of posts are left out, so a real wire
-    /// pulls less in the cold.
+    /// Solves 1 + s₁ = (1 + α·ΔT)(1 + (H₁ − H₀)/(EA))(1 + s₀) by halving, with the parabola's slack s = w²L²/(24H²)
+    /// (the usual change-of-state equation of overhead lines, from memory); all bays alike and the wire free to slide.
+    /// Creep and the give of posts are left out, so a real wire pulls less in the cold.
     pub fn tension_after(self, elastic: Elastic, rise_k: f64) -> Force {
         let load = (self.weight_n_per_m * self.length_m).powi(2) / 24.0;
         let before = self.tension.newtons();
@@ -113,7 +113,7 @@ pub fn tension_for_sag(weight_n_per_m: f64, span_m: f64, sag_m: f64) -> Force {
     Force::new(weight_n_per_m * span_m * span_m / (8.0 * sag_m))
 }
 
-/// Sag in metres after warming by `rise_k` without elasticity: the wire's length grows by `αΔT` and the parabola's length
+/// Sag in metres after warming by `rise_k` without elasticity: the wire's length grows by α·ΔT and the parabola's length
 /// formula is turned round. A real wire relaxes and sags a little less. 0 when cooling takes up all the slack.
 pub fn sag_after_warming_m(span_m: f64, sag_cold_m: f64, expansion_per_k: f64, rise_k: f64) -> f64 {
     let length = (span_m + extra_length_m(span_m, sag_cold_m)) * (1.0 + expansion_per_k * rise_k);

@@ -53,7 +53,7 @@ impl Gauge {
             1 - noughts.parse::<i32>().ok().filter(|n| (1..=4).contains(n)).ok_or_else(refuse)?
         } else if !bare.is_empty() && bare.len() <= 4 && bare.bytes().all(|b| b == b'0') {
             1 - i32::try_from(bare.len()).map_err(|_| refuse())?
-        } else if bare.bytes().all(|b| b.is_ascii_digit()) {
+        } else if bare.bytes().all(|b| b.is_ascii_digit()) && !bare.starts_with('0') {
             bare.parse().map_err(|_| refuse())?
         } else {
             return Err(refuse());
