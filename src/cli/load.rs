@@ -124,6 +124,7 @@ fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Fai
         problems.extend(noticed);
         results.push(OptionResult { design, takeoff, bill });
     }
+    problems.extend(ages(&project, &catalogue, &results));
     let problems = problems.deduplicated();
     checked.problems = problems.clone();
     if problems.has_errors() {
@@ -131,6 +132,16 @@ fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Fai
     }
     let hash = checked.hash.clone();
     Ok((checked, Some(Work { project, catalogue, results, problems, hash })))
+}
+
+/// How old the prices are that the bills use.
+fn ages(project: &Project, catalogue: &Catalogue, results: &[OptionResult]) -> Problems {
+    let lines = results.iter().flat_map(|result| &result.bill.lines);
+    let used: Vec<&String> = lines.filter_map(|line| line.offer.as_ref()).collect();
+    let mut bought = catalogue.clone();
+    bought.offers.retain(|id, _| used.contains(&id));
+    let oldest = u64::try_from(project.prices.oldest_price_days).unwrap_or_default();
+    catalogue::age(&bought, project.estimated, oldest)
 }
 
 /// What the search for the best delay and the noise budget found, an array a line or two.

@@ -8,7 +8,7 @@ use crate::arrays::{self, Context, HubAmplifier, LineCost, Names};
 use crate::catalogue::Catalogue;
 use crate::plan::{Allowances, Cables, LineRole, choose_cables, measure};
 use crate::problem::{Problem, Problems};
-use crate::project::{ArraySpec, Project, Terrain};
+use crate::project::{ArraySpec, Combining, Project, Terrain};
 use crate::reception::{self, Weighting};
 
 /// Codes of problems found while settling a design.
@@ -97,8 +97,8 @@ fn settle_array(
         receiver: project.site.receiver,
         max_bay,
         wire_diameter: bay::wire_diameter(bench.catalogue),
-        branch_cost: LineCost { leg: 1.0, onward: 1.0 },
-        main_cost: LineCost { leg: 1.0, onward: 1.0 },
+        branch_cost: line_cost(bench.catalogue, &cables, LineRole::Branch, LineRole::Run),
+        main_cost: line_cost(bench.catalogue, &cables, outer_legs(spec), LineRole::Main),
         amplifier: HubAmplifier::Absent,
         balance: None,
     };
@@ -136,6 +136,27 @@ fn settle_array(
     land::check(project, spec, &design.plan, problems);
     trim_spread(bench, &design, problems);
     design
+}
+
+/// The lines that arrive at the outermost hub.
+fn outer_legs(spec: &ArraySpec) -> LineRole {
+    let cells = spec.endfire.is_some() && spec.broadside.is_some();
+    if cells && spec.feed.combining == Combining::ByCell { LineRole::Run } else { LineRole::Branch }
+}
+
+/// What a metre costs on either side of a hub, by the lowest price of a metre; alike where a price is missing.
+fn line_cost(catalogue: &Catalogue, cables: &Cables, leg: LineRole, onward: LineRole) -> LineCost {
+    let price = |role: LineRole| {
+        let offers = catalogue.offers_of(cables.of(role).part.id());
+        offers
+            .filter_map(|offer| offer.price.map(|price| price.amount() / offer.pack))
+            .min()
+            .and_then(|p| p.to_f64())
+    };
+    match (price(leg), price(onward)) {
+        (Some(leg), Some(onward)) => LineCost { leg, onward },
+        (Some(_) | None, Some(_) | None) => LineCost { leg: 1.0, onward: 1.0 },
+    }
 }
 
 /// Tolerances and test frequencies of the lines that must be exact.

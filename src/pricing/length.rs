@@ -7,7 +7,7 @@ use rust_decimal::Decimal;
 use super::code;
 use super::demand::{Lengths, packs_for};
 use super::model::{Bill, PartCutPlan, Unpriced};
-use super::offer::{Kind, Market, Priced, blank_line, fill_line, unpriced};
+use super::offer::{Kind, Market, Priced, blank_line, fill_line, unit_price, unpriced};
 use crate::catalogue::{Part, Unit};
 use crate::cutting::{self, CutJob, CutPlan, ReelSource, StockLength};
 use crate::problem::{Problem, Problems};
@@ -34,7 +34,37 @@ pub(super) fn buy_lengths(bill: &mut Bill, market: &Market<'_>, need: &Lengths, 
         problems.push(too_long(part, &plan, &offers));
     }
     add_lines(bill, market, need, part, &offers, &plan, total);
+    hint_cheaper(bill, market, part);
     bill.cut_plans.push(PartCutPlan { part: part.id.clone(), description: part.description.clone(), plan });
+}
+
+/// Names a part of the same role and impedance that costs less a metre; never takes it, for lengths would change with it.
+fn hint_cheaper(bill: &mut Bill, market: &Market<'_>, part: &Part) {
+    let z0 = |part: &Part| market.catalogue.cables.get(&part.id).and_then(|cable| cable.z0_ohm);
+    let same = |other: &&Part| {
+        other.role == part.role
+            && other.id != part.id
+            && z0(other) == z0(part)
+            && other.attribute("conductors") == part.attribute("conductors")
+            && other.attribute("kind") == part.attribute("kind")
+    };
+    let Some(own) = unit_price(market, part) else { return };
+    let others = market.catalogue.parts.values().filter(same);
+    let priced = others.filter_map(|other| unit_price(market, other).map(|price| (price, other)));
+    let Some((price, other)) =
+        priced.filter(|(price, _)| *price < own).min_by_key(|(price, other)| (*price, &other.id))
+    else {
+        return;
+    };
+    let currency = &market.project.currency;
+    bill.hints.push(format!(
+        "`{}` ({}) costs from {currency} {} a metre, `{}` from {currency} {}: naming it changes velocity factor, loss and lengths",
+        other.id,
+        other.description,
+        price.round_dp(3).normalize(),
+        part.id,
+        own.round_dp(3).normalize()
+    ));
 }
 
 /// Plans with plain offers first; price breaks that so many reels reach are then allowed as well.

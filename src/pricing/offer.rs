@@ -119,19 +119,23 @@ pub(super) fn buy_counted(bill: &mut Bill, market: &Market<'_>, need: &Counted, 
         bill.lines.push(line);
         return;
     }
-    match best(&offers, missing) {
-        Some(purchase) => {
-            hint_break(bill, &offers, &purchase, missing, market);
-            fill_line(&mut line, &purchase.priced, purchase.packs, market);
-            bill.lines.push(line);
-        }
-        None => buy_mixed(bill, market, part, need, missing, &offers),
+    let ranked = ranked(&offers, missing);
+    let Some(purchase) = ranked.first() else {
+        buy_mixed(bill, market, part, need, missing, &offers);
+        return;
+    };
+    hint_break(bill, &offers, purchase, missing, market);
+    fill_line(&mut line, &purchase.priced, purchase.packs, market);
+    if let Some(second) = ranked.get(1) {
+        let total = second.total.rounded(&market.project.currency);
+        line.reason.push(format!("next best: {} × `{}` = {total}", second.packs, second.priced.offer.id));
     }
+    bill.lines.push(line);
 }
 
-/// The cheapest way to have `missing` units of one offer, ties to the first by id.
-fn best<'a>(offers: &[Priced<'a>], missing: Decimal) -> Option<Purchase<'a>> {
-    offers
+/// The ways to have `missing` units from one offer, cheapest first, ties by id.
+fn ranked<'a>(offers: &[Priced<'a>], missing: Decimal) -> Vec<Purchase<'a>> {
+    let mut purchases: Vec<Purchase<'a>> = offers
         .iter()
         .filter_map(|priced| {
             let price = priced.price?;
@@ -146,7 +150,9 @@ fn best<'a>(offers: &[Priced<'a>], missing: Decimal) -> Option<Purchase<'a>> {
             }
             Some(Purchase { priced: priced.clone(), packs, total: price.times(Decimal::from(packs)) })
         })
-        .min_by(|a, b| (a.total, &a.priced.offer.id).cmp(&(b.total, &b.priced.offer.id)))
+        .collect();
+    purchases.sort_by(|a, b| (a.total, &a.priced.offer.id).cmp(&(b.total, &b.priced.offer.id)));
+    purchases
 }
 
 /// No single offer has enough: the cheapest a unit first, as far as each goes.
@@ -316,4 +322,13 @@ pub(super) fn fill_line(line: &mut BillLine, priced: &Priced<'_>, packs: u64, ma
             line.price_source
         ));
     }
+}
+
+/// The lowest price of one unit of a part, in the project's currency; nothing when no offer has a usable price.
+pub(super) fn unit_price(market: &Market<'_>, part: &Part) -> Option<Decimal> {
+    let mut ignored = Problems::default();
+    let offers = market.offers(part, &mut ignored);
+    let per_unit =
+        offers.iter().filter_map(|priced| priced.price.map(|price| price.amount() / priced.offer.pack));
+    per_unit.min()
 }
