@@ -97,7 +97,10 @@ pub fn sheet(project: &Project, results: &[OptionResult], notes: Vec<String>) ->
         assumptions.rows.push(vec![a.key.clone(), a.value.clone(), a.why.clone()]);
     }
     sheet.tables.push(assumptions);
-    sheet.notes.extend(results.iter().flat_map(|result| result.bill.hints.clone()));
+    let mut hints: Vec<String> = results.iter().flat_map(|result| result.bill.hints.clone()).collect();
+    hints.sort();
+    hints.dedup();
+    sheet.notes.extend(hints);
     sheet.notes.push(NO_LABOUR.to_owned());
     sheet.notes.extend(notes);
     sheet

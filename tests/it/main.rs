@@ -6,6 +6,7 @@ mod architecture;
 mod commands;
 mod laws;
 mod money;
+mod problems;
 mod readme;
 mod sameness;
 mod support;
