@@ -99,13 +99,16 @@ pub fn longest_bay_m(weight_n_per_m: f64, tension: Force, sag_m: f64) -> f64 {
 }
 
 /// How many equal bays a span needs when none may be longer than `longest_m`; at least 1.
+///
+/// A billionth of a bay over a whole number counts as nothing: 99.9 m in bays of 33.3 m are three, though the quotient
+/// of the two binary numbers is a little above 3.
 #[expect(
     clippy::cast_possible_truncation,
     clippy::cast_sign_loss,
     reason = "a count of posts is small and positive"
 )]
 pub fn bays(span_m: f64, longest_m: f64) -> u32 {
-    (span_m / longest_m).ceil().clamp(1.0, 1e6) as u32
+    (span_m / longest_m - 1e-9).ceil().clamp(1.0, 1e6) as u32
 }
 
 /// The horizontal tension for a wanted sag: wL²/(8S), by the parabola.
@@ -162,5 +165,6 @@ mod tests {
         assert_eq!(bays(10.0, 33.0), 1);
         assert_eq!(bays(66.0, 33.0), 2);
         assert_eq!(bays(66.1, 33.0), 3);
+        assert_eq!(bays(99.9, 33.3), 3);
     }
 }

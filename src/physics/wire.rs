@@ -246,6 +246,17 @@ mod tests {
     }
 
     #[test]
+    fn clad_centres_are_21_percent_at_the_thinnest_wire_allowed() {
+        // 1 % less in diameter, to the ten-thousandth of an inch (from memory): all seven printed limits come out.
+        for (inches, ohms_per_kft, _) in CLAD_CENTRES {
+            let thinnest = inches - (inches * 100.0).round() / 10_000.0;
+            let copper = resistance_ohm_per_m(Material::AnnealedCopper, thinnest * 0.0254) * 304.8;
+            let limit = copper * resistance_over_copper(21.0);
+            assert!((limit / ohms_per_kft - 1.0).abs() < 2e-4, "{inches} in: {limit} against {ohms_per_kft}");
+        }
+    }
+
+    #[test]
     fn gauge_36_is_five_mils_by_definition() {
         let mils = Gauge::new(36).unwrap().circular_mils();
         assert!((mils - 25.0).abs() < 1e-9);
