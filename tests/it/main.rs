@@ -10,4 +10,5 @@ mod problems;
 mod readme;
 mod sameness;
 mod support;
+mod trade;
 mod vectors;

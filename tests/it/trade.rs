@@ -1,0 +1,64 @@
+//! Facts of the trade that count parts (common practice, no source): `tests/reference/trade.toml`.
+
+use serde_json::Value;
+
+use crate::support::{ProjectTest, repository};
+
+fn fact(id: &str) -> toml::Value {
+    let text = std::fs::read_to_string(repository("tests/reference/trade.toml")).unwrap();
+    let facts: toml::Table = toml::from_str(&text).unwrap();
+    let all = facts["fact"].as_array().unwrap();
+    all.iter().find(|fact| fact["id"].as_str() == Some(id)).unwrap()["expect"].clone()
+}
+
+fn parts(element: &str, stages: &str) -> Value {
+    let text = format!(
+        "[project]\ntitle = \"Trade\"\ncurrency = \"EUR\"\nestimated = 2026-03-01\nfrequency = \"1.83 MHz\"\n\
+         [site]\nreceiver = {{ east = \"0 m\", north = \"-150 m\" }}\n\
+         [[array]]\nname = \"a\"\nheading = \"0 deg\"\nelement.{element}\n{stages}"
+    );
+    ProjectTest::new(&text).run(&["parts", "--format", "json"]).exits(0).json()["options"][0].clone()
+}
+
+fn count(parts: &Value, role: &str) -> i64 {
+    let items = parts["items"].as_array().unwrap();
+    items.iter().filter(|item| item["role"] == role).map(|item| item["quantity"].as_i64().unwrap()).sum()
+}
+
+/// The fact is told of two directions; a switch adds relays and control cable, no coax, so one direction must hold it too.
+#[test]
+fn a_pair_of_three_element_cells_takes_over_a_thousand_feet_of_coax() {
+    let expect = fact("cell-pair-parts");
+    let parts = parts(
+        "vertical = { height = \"6 m\", active = true }",
+        "endfire = { count = 3, spacing = \"70 ft\" }\nbroadside = { spacing = \"400 ft\" }\n",
+    );
+    let coax: f64 = parts["pieces"]
+        .as_array()
+        .unwrap()
+        .iter()
+        .filter(|piece| ["branch", "run", "delay", "main"].contains(&piece["role"].as_str().unwrap()))
+        .map(|piece| piece["cut_m"].as_f64().unwrap())
+        .sum();
+    let least = expect["coax_ft_more_than"].as_integer().unwrap();
+    assert!(coax / 0.3048 > least as f64, "{} ft", coax / 0.3048);
+    assert_eq!(count(&parts, "amplifier"), expect["amplifiers"].as_integer().unwrap());
+    let branches =
+        parts["pieces"].as_array().unwrap().iter().filter(|piece| piece["role"] == "branch").count();
+    assert_eq!(branches, 6);
+    let cells = expect["hubs_with_delay_lines"].as_integer().unwrap();
+    assert_eq!(count(&parts, "hub-box"), cells + 1, "a hub a cell and one for the array");
+    assert_eq!(count(&parts, "choke"), 6 + 2 + 2, "six branches, two runs, two on the main");
+}
+
+#[test]
+fn two_echelon_pairs_take_four_feed_boxes_and_four_terminations() {
+    let expect = fact("four-wire-parts");
+    let parts = parts(
+        "wire = { length = \"176 m\" }",
+        "echelon = { stagger = \"60 ft\" }\nbroadside = { spacing = \"400 ft\" }\n",
+    );
+    assert_eq!(count(&parts, "feed-box"), expect["feed_boxes"].as_integer().unwrap());
+    assert_eq!(count(&parts, "termination-box"), expect["terminations"].as_integer().unwrap());
+    assert_eq!(count(&parts, "ground-rod"), 16, "two rods at each of eight wire ends in average soil");
+}
