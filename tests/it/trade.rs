@@ -40,8 +40,8 @@ fn a_pair_of_three_element_cells_takes_over_a_thousand_feet_of_coax() {
         .filter(|piece| ["branch", "run", "delay", "main"].contains(&piece["role"].as_str().unwrap()))
         .map(|piece| piece["cut_m"].as_f64().unwrap())
         .sum();
-    let least = expect["coax_ft_more_than"].as_integer().unwrap();
-    assert!(coax / 0.3048 > least as f64, "{} ft", coax / 0.3048);
+    let least = f64::from(i32::try_from(expect["coax_ft_more_than"].as_integer().unwrap()).unwrap());
+    assert!(coax / 0.3048 > least, "{} ft", coax / 0.3048);
     assert_eq!(count(&parts, "amplifier"), expect["amplifiers"].as_integer().unwrap());
     let branches =
         parts["pieces"].as_array().unwrap().iter().filter(|piece| piece["role"] == "branch").count();
