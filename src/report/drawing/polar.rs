@@ -23,9 +23,9 @@ const STYLES: [(f64, &str); 6] =
     [(0.7, ""), (0.6, "2.4 1"), (0.3, ""), (0.6, "0.1 1.3"), (0.35, "5 1.2"), (1.1, "")];
 /// Chain dots, for the wanted bearing alone.
 const CHAIN: &str = "4 1 .8 1";
-/// Letters of 3.4 mm that fit beside the plot in a wide font.
-const NAME_LETTERS: usize = 18;
-const LINE_LETTERS: usize = 25;
+/// Letters that fit beside the plot in a wide font: of a curve's name, and of a line.
+const NAME_LETTERS: usize = 19;
+const LINE_LETTERS: usize = 28;
 
 /// One curve.
 #[derive(Clone, Copy, Debug)]
@@ -83,8 +83,8 @@ pub fn azimuth(plot: &Plot<'_>) -> String {
         quietest(&turned, &[75.0, 105.0, 255.0, 285.0, 15.0, 45.0, 135.0, 165.0, 195.0, 225.0, 315.0, 345.0]);
     drawing.ring_labels(free);
     let names: Vec<String> = wanted.iter().map(|bearing| format!("wanted, {bearing} true")).collect();
-    drawing.legend(plot, &names, &turned);
-    drawing.finish(2.0 * RIM + 24.0, &format!("{}: level by azimuth, true bearings", plot.title))
+    let bottom = drawing.legend(plot, &names, &turned);
+    drawing.finish(bottom.max(2.0 * RIM + 20.0), &format!("{}: level by azimuth, true bearings", plot.title))
 }
 
 /// The level from the horizon ahead over the zenith to the horizon behind; curves from [`crate::radio::elevation_cut`].
@@ -109,8 +109,8 @@ pub fn elevation(plot: &Plot<'_>) -> String {
         .collect();
     drawing.curves(&turned);
     drawing.ring_labels(quietest(&turned, &[-75.0, -45.0, -15.0, 15.0, 45.0, 75.0]));
-    drawing.legend(plot, &[], &turned);
-    drawing.finish(RIM + 23.0, &format!("{}: level by elevation", plot.title))
+    let bottom = drawing.legend(plot, &[], &turned);
+    drawing.finish(bottom.max(RIM + 17.0), &format!("{}: level by elevation", plot.title))
 }
 
 fn drawn<'a>(plot: &Plot<'a>) -> &'a [Curve<'a>] {
@@ -279,7 +279,8 @@ impl Drawing {
         }
     }
 
-    fn legend(&mut self, plot: &Plot<'_>, wanted: &[String], curves: &[Vec<(f64, f64)>]) {
+    /// Names everything beside the plot, and says where the words end.
+    fn legend(&mut self, plot: &Plot<'_>, wanted: &[String], curves: &[Vec<(f64, f64)>]) -> f64 {
         let mut pen = Pen { body: String::new(), y: 8.0 };
         pen.words(plot.title, (3.9, 5.0), NAME_LETTERS, LEGEND_X, BOLD);
         for line in plot.lines {
@@ -311,6 +312,7 @@ impl Drawing {
             );
         }
         self.body += &pen.body;
+        pen.y
     }
 
     fn line(&mut self, from: (f64, f64), to: (f64, f64), weight: f64, dash: &str) {

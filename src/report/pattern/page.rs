@@ -25,9 +25,17 @@ struct Page {
     hash: String,
     date: String,
     basis: &'static str,
-    answer: Vec<String>,
+    answers: Vec<PageAnswer>,
     arrays: Vec<Section>,
     notes: Vec<String>,
+}
+
+/// The answer on one array.
+#[derive(Serialize)]
+struct PageAnswer {
+    headlines: Vec<String>,
+    meaning: Vec<String>,
+    warnings: Vec<String>,
 }
 
 /// One array of one option.
@@ -70,13 +78,18 @@ pub fn page(view: &View<'_>) -> Result<String, tera::Error> {
 }
 
 fn contents(view: &View<'_>) -> Page {
-    let mut answer = Vec::new();
+    let mut answers = Vec::new();
     let mut arrays = Vec::new();
     for (option, reports) in view.options {
         for report in reports {
-            answer.extend(sheet::answer(view, option, report).iter().map(|line| words::minus(line)));
-            let number = arrays.len() + 1;
-            arrays.push(section(view, option, report, number));
+            let name = sheet::name(view, option, report);
+            let sheet::Answer { headlines, meaning, warnings } = sheet::answer(&name, report);
+            answers.push(PageAnswer {
+                headlines,
+                meaning: sentences(&meaning),
+                warnings: sentences(&warnings),
+            });
+            arrays.push(section(view, name, report, arrays.len() + 1));
         }
     }
     Page {
@@ -85,18 +98,24 @@ fn contents(view: &View<'_>) -> Page {
         hash: view.hash.to_owned(),
         date: view.project.estimated.to_string(),
         basis: words::basis(view.weighting),
-        answer,
+        answers,
         arrays,
-        notes: sheet::notes(view).iter().skip(1).map(|line| words::minus(line)).collect(),
+        notes: sentences(&sheet::notes(view)[1..]),
     }
 }
 
-fn section(view: &View<'_>, option: &str, report: &ArrayReport, number: usize) -> Section {
-    let heading = if option.is_empty() || option == report.array {
-        report.array.clone()
-    } else {
-        format!("{} (option {option})", report.array)
+/// Our own lines of the terminal as sentences of a page.
+fn sentences(lines: &[String]) -> Vec<String> {
+    let sentence = |line: &String| {
+        let text = words::minus(line);
+        let mut letters = text.chars();
+        let first = letters.next().map(|c| c.to_uppercase().to_string()).unwrap_or_default();
+        format!("{first}{}.", letters.as_str())
     };
+    lines.iter().map(sentence).collect()
+}
+
+fn section(view: &View<'_>, heading: String, report: &ArrayReport, number: usize) -> Section {
     let directions = report.directions.iter().enumerate();
     let plots = directions
         .flat_map(|(n, direction)| plots(&report.array, direction, &format!("a{number}d{}", n + 1)))
@@ -105,6 +124,9 @@ fn section(view: &View<'_>, option: &str, report: &ArrayReport, number: usize) -
     Section { heading, plots, tables: tables.into_iter().map(page_table).collect() }
 }
 
+/// The bands of one direction that have figures.
+type Known<'a> = [(&'a FrequencyReport, &'a Figures)];
+
 /// Azimuth and elevation of one direction, a curve a band.
 fn plots(array: &str, direction: &DirectionReport, prefix: &str) -> Vec<Drawing> {
     let known: Vec<(&FrequencyReport, &Figures)> = direction
@@ -112,53 +134,58 @@ fn plots(array: &str, direction: &DirectionReport, prefix: &str) -> Vec<Drawing>
         .iter()
         .filter_map(|report| report.figures.as_ref().ok().map(|figures| (report, figures)))
         .collect();
-    let mut drawings = Vec::new();
-    for (n, part) in known.chunks(polar::CURVES).enumerate() {
-        let number = if n == 0 { String::new() } else { format!("p{}", n + 1) };
-        let draw = |kind: &str,
-                    draw: fn(&Plot<'_>) -> String,
-                    title: &str,
-                    line: &str,
-                    name: &dyn Fn(&Figures) -> String,
-                    points: fn(&Figures) -> &[CutPoint]| {
-            let names: Vec<String> = part
-                .iter()
-                .map(|(report, figures)| format!("{}{}", report.frequency, name(figures)))
-                .collect();
-            let curves: Vec<Curve<'_>> = part
-                .iter()
-                .zip(&names)
-                .map(|((_, figures), name)| Curve {
-                    name,
-                    wanted: direction.bearing,
-                    points: points(figures),
-                })
-                .collect();
-            let prefix = format!("{kind}-{prefix}{number}");
-            let lines = [array.to_owned(), line.to_owned()];
-            draw(&Plot { prefix: &prefix, title, lines: &lines, curves: &curves })
-        };
-        let peak = |figures: &Figures| {
-            let elevation = Trust::of(figures).whole(figures.report.directivity.peak_elevation_deg);
-            format!(" at {elevation}° up")
-        };
-        let none = |_: &Figures| String::new();
-        drawings.push(Drawing {
-            svg: draw("az", polar::azimuth, "Level by azimuth", "at the elevation of its peak", &peak, |f| {
-                &f.azimuth
-            }),
-            caption: format!("{array} towards {} true, seen from above.", direction.bearing),
-        });
-        let line = format!("along {}", direction.bearing);
-        drawings.push(Drawing {
-            svg: draw("el", polar::elevation, "Level by elevation", &line, &none, |f| &f.elevation),
-            caption: format!(
-                "The same seen from the side: ahead towards {}, behind the other way.",
-                direction.bearing
-            ),
-        });
+    let parts = known.chunks(polar::CURVES).enumerate();
+    parts
+        .flat_map(|(n, part)| {
+            let prefix = if n == 0 { prefix.to_owned() } else { format!("{prefix}p{}", n + 1) };
+            [azimuth(array, direction, part, &prefix), elevation(array, direction, part, &prefix)]
+        })
+        .collect()
+}
+
+fn azimuth(array: &str, direction: &DirectionReport, known: &Known<'_>, prefix: &str) -> Drawing {
+    let name = |(report, figures): &(&FrequencyReport, &Figures)| {
+        let peak = Trust::of(figures).whole(figures.report.directivity.peak_elevation_deg);
+        format!("{}, {peak}° up", report.frequency)
+    };
+    let names: Vec<String> = known.iter().map(name).collect();
+    let curves: Vec<Curve<'_>> =
+        known.iter().zip(&names).map(|((_, f), name)| curve(direction, name, &f.azimuth)).collect();
+    let lines = [array.to_owned(), "each band at its peak".to_owned()];
+    let prefix = format!("az-{prefix}");
+    Drawing {
+        svg: polar::azimuth(&Plot {
+            prefix: &prefix,
+            title: "Level by azimuth",
+            lines: &lines,
+            curves: &curves,
+        }),
+        caption: format!("{array} towards {} true, seen from above.", direction.bearing),
     }
-    drawings
+}
+
+fn elevation(array: &str, direction: &DirectionReport, known: &Known<'_>, prefix: &str) -> Drawing {
+    let names: Vec<String> = known.iter().map(|(report, _)| report.frequency.to_string()).collect();
+    let curves: Vec<Curve<'_>> =
+        known.iter().zip(&names).map(|((_, f), name)| curve(direction, name, &f.elevation)).collect();
+    let lines = [array.to_owned(), format!("along {} true", direction.bearing)];
+    let prefix = format!("el-{prefix}");
+    Drawing {
+        svg: polar::elevation(&Plot {
+            prefix: &prefix,
+            title: "Level by elevation",
+            lines: &lines,
+            curves: &curves,
+        }),
+        caption: format!(
+            "{array} from the side: towards {} on the right, behind on the left.",
+            direction.bearing
+        ),
+    }
+}
+
+fn curve<'a>(direction: &DirectionReport, name: &'a str, points: &'a [CutPoint]) -> Curve<'a> {
+    Curve { name, wanted: direction.bearing, points }
 }
 
 fn page_table(table: Table) -> PageTable {

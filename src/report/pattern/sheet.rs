@@ -14,7 +14,8 @@ pub fn sheet(view: &View<'_>) -> Sheet {
     let mut sheet = Sheet::default();
     for (option, reports) in view.options {
         for report in reports {
-            sheet.answer.extend(answer(view, option, report));
+            let Answer { headlines, meaning, warnings } = answer(&name(view, option, report), report);
+            sheet.answer.extend([headlines, meaning, warnings].concat());
             sheet.tables.extend(table::tables(report, view.delays.get(&report.array)));
         }
     }
@@ -22,35 +23,47 @@ pub fn sheet(view: &View<'_>) -> Sheet {
     sheet
 }
 
-/// What one array's answer is: a headline a direction at the design frequency, what it means, the amplifier, and
-/// warnings on every band.
-pub(super) fn answer(view: &View<'_>, option: &str, report: &ArrayReport) -> Vec<String> {
-    let name = if option.is_empty() || option == report.array || view.options.len() == 1 {
+/// The answer on one array.
+pub(super) struct Answer {
+    /// One a direction at the design frequency.
+    pub(super) headlines: Vec<String>,
+    /// What the first of them means, and whether an amplifier is needed.
+    pub(super) meaning: Vec<String>,
+    /// Where the figures are not to be relied on, on any band.
+    pub(super) warnings: Vec<String>,
+}
+
+/// The array's name, with its option where that says more.
+pub(super) fn name(view: &View<'_>, option: &str, report: &ArrayReport) -> String {
+    if option.is_empty() || option == report.array || view.options.len() == 1 {
         report.array.clone()
     } else {
         format!("{} (option {option})", report.array)
-    };
-    let mut lines = Vec::new();
-    for (n, direction) in report.directions.iter().enumerate() {
+    }
+}
+
+/// The answer on one array.
+pub(super) fn answer(name: &str, report: &ArrayReport) -> Answer {
+    let mut answer = Answer { headlines: Vec::new(), meaning: Vec::new(), warnings: warnings(name, report) };
+    let several = report.directions.len() > 1;
+    for direction in &report.directions {
         let Some(first) = direction.frequencies.first() else { continue };
-        let several = report.directions.len() > 1;
         let towards = if several { format!(" towards {}", direction.bearing) } else { String::new() };
+        let when = format!("{}{towards}", first.frequency);
         match &first.figures {
             Ok(figures) => {
-                let frequency = first.frequency.to_string();
-                lines.push(words::headline(&name, &frequency, &towards, figures));
-                if n == 0 {
-                    lines.push(words::meaning(figures));
-                    lines.push(words::amplifier_sentence(figures.noise.as_ref()));
+                answer.headlines.push(words::headline(name, &when, figures));
+                if answer.meaning.is_empty() {
+                    answer.meaning.push(words::meaning(figures));
+                    answer.meaning.push(words::amplifier_sentence(figures.noise.as_ref()));
                 }
             }
             Err(error) => {
-                lines.push(format!("{name} at {}{towards} cannot be computed: {error}", first.frequency));
+                answer.headlines.push(format!("{name} at {when} cannot be computed: {error}"));
             }
         }
     }
-    lines.extend(warnings(&name, report));
-    lines
+    answer
 }
 
 /// One line a reason, with the bands it holds for.
@@ -130,6 +143,6 @@ fn besides(report: &ArrayReport) -> Vec<String> {
     let known = frequencies(report).filter_map(|frequency| frequency.figures.as_ref().ok());
     known
         .flat_map(|figures| figures.notes.iter().chain(&figures.report.validity.notes))
-        .map(|note| format!("{}: {note}", report.array))
+        .map(|note| format!("besides, on {}: {note}", report.array))
         .collect()
 }

@@ -72,12 +72,14 @@ impl Trust {
 }
 
 /// The first sentence on an array: the figures that decide.
-pub(super) fn headline(array: &str, frequency: &str, towards: &str, figures: &Figures) -> String {
+///
+/// `when` is the frequency, with the direction where there are several.
+pub(super) fn headline(array: &str, when: &str, figures: &Figures) -> String {
     let Directivity { rdf_db, peak_elevation_deg, front_to_back_db, worst_rear, .. } =
         &figures.report.directivity;
     let trust = Trust::of(figures);
     minus(&format!(
-        "{array} at {frequency}{towards} hears {} dB RDF at {}° elevation, front-to-back {} dB, worst rear lobe {} dB",
+        "{array} at {when} hears {} dB RDF at {}° elevation, front-to-back {} dB, worst rear lobe {} dB",
         trust.number(*rdf_db),
         trust.whole(*peak_elevation_deg),
         trust.front_to_back(*front_to_back_db),
@@ -114,7 +116,7 @@ pub(super) fn meaning(figures: &Figures) -> String {
 /// Where the worst rear lobe lies, as a true bearing and an elevation.
 pub(super) fn worst_rear_place(towards: Bearing, figures: &Figures) -> String {
     let lobe = &figures.report.directivity.worst_rear;
-    if lobe.elevation_deg > 89.5 {
+    if lobe.elevation_deg > 84.5 {
         return "overhead".to_owned();
     }
     let bearing = Bearing::from_degrees((towards.degrees() + lobe.azimuth_deg).round());
@@ -148,7 +150,8 @@ pub(super) fn amplifier_sentence(noise: Option<&Noise>) -> String {
         None if without >= NEEDLESS_BELOW_DB => "; the catalogue has none for a hub".to_owned(),
         None => String::new(),
     };
-    format!("amplifier: {verdict}; the receiver's own noise raises the floor by {without:.1} dB{with}")
+    let by = if without < 0.05 { "less than 0.1 dB".to_owned() } else { format!("{without:.1} dB") };
+    format!("amplifier: {verdict}; the receiver's own noise raises the floor by {by}{with}")
 }
 
 /// On which weights the figures rest.
