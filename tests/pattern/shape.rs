@@ -134,7 +134,7 @@ fn outside_its_limits_a_figure_has_no_decimals_and_a_warning() {
     let sheet = pattern::sheet(&settled.view());
     assert!(sheet.answer[0].contains("hears about "), "{}", sheet.answer[0]);
     assert!(
-        sheet.answer.iter().any(|line| line.starts_with("warning: high at 7.1 MHz: ")),
+        sheet.answer.iter().any(|line| line.starts_with("warning: high: at 7.1 MHz a wire height ")),
         "{:?}",
         sheet.answer
     );

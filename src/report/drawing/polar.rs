@@ -387,7 +387,7 @@ fn text_at((x, y): (f64, f64), size: f64, anchor: &str, style: &str, text: &str)
     )
 }
 
-/// Lines of at most `letters`, broken between words, or inside a word that is longer than a line.
+/// Lines of at most `letters`, broken between words, after hyphens, or inside a word that is longer than a line.
 fn wrapped(text: &str, letters: usize) -> Vec<String> {
     let mut lines = vec![String::new()];
     for word in text.split_whitespace() {
@@ -403,14 +403,23 @@ fn wrapped(text: &str, letters: usize) -> Vec<String> {
                 line.extend(&word);
                 break;
             }
-            if used == 0 {
-                line.extend(word.drain(..letters));
+            let part = breakable(&word, room).or_else(|| (used == 0).then(|| letters.min(word.len())));
+            if let Some(part) = part {
+                if used > 0 {
+                    line.push(' ');
+                }
+                line.extend(word.drain(..part));
             }
             lines.push(String::new());
         }
     }
     lines.retain(|line| !line.is_empty());
     lines
+}
+
+/// How much of a word fits up to and with its last hyphen within `room`.
+fn breakable(word: &[char], room: usize) -> Option<usize> {
+    word[..room.min(word.len())].iter().rposition(|c| *c == '-').map(|at| at + 1)
 }
 
 /// A number with at most two decimals; never `NaN`, never minus nothing.
@@ -483,5 +492,6 @@ mod tests {
     fn long_names_are_broken_into_lines() {
         assert_eq!(wrapped("two ways north-west", 10), ["two ways", "north-west"]);
         assert_eq!(wrapped("abcdefghij", 4), ["abcd", "efgh", "ij"]);
+        assert_eq!(wrapped("a long-winded-name", 12), ["a long-", "winded-name"]);
     }
 }

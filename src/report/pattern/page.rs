@@ -17,6 +17,9 @@ use crate::report::sheet::Align;
 const NAME: &str = "pattern.html";
 const TEMPLATE: &str = include_str!("../../../templates/pattern.html");
 
+/// More curves than this in one plot cannot be followed.
+const CURVES: usize = 3;
+
 /// What the template prints.
 #[derive(Serialize)]
 struct Page {
@@ -35,7 +38,7 @@ struct Page {
 struct PageAnswer {
     headlines: Vec<String>,
     meaning: Vec<String>,
-    warnings: Vec<String>,
+    warning: Option<String>,
 }
 
 /// One array of one option.
@@ -83,11 +86,11 @@ fn contents(view: &View<'_>) -> Page {
     for (option, reports) in view.options {
         for report in reports {
             let name = sheet::name(view, option, report);
-            let sheet::Answer { headlines, meaning, warnings } = sheet::answer(&name, report);
+            let sheet::Answer { headlines, meaning, warning } = sheet::answer(&name, report);
             answers.push(PageAnswer {
                 headlines,
                 meaning: sentences(&meaning),
-                warnings: sentences(&warnings),
+                warning: warning.as_deref().map(sentence),
             });
             arrays.push(section(view, name, report, arrays.len() + 1));
         }
@@ -106,13 +109,14 @@ fn contents(view: &View<'_>) -> Page {
 
 /// Our own lines of the terminal as sentences of a page.
 fn sentences(lines: &[String]) -> Vec<String> {
-    let sentence = |line: &String| {
-        let text = words::minus(line);
-        let mut letters = text.chars();
-        let first = letters.next().map(|c| c.to_uppercase().to_string()).unwrap_or_default();
-        format!("{first}{}.", letters.as_str())
-    };
-    lines.iter().map(sentence).collect()
+    lines.iter().map(|line| sentence(line)).collect()
+}
+
+fn sentence(line: &str) -> String {
+    let text = words::minus(line);
+    let mut letters = text.chars();
+    let first = letters.next().map(|c| c.to_uppercase().to_string()).unwrap_or_default();
+    format!("{first}{}.", letters.as_str())
 }
 
 fn section(view: &View<'_>, heading: String, report: &ArrayReport, number: usize) -> Section {
@@ -134,7 +138,7 @@ fn plots(array: &str, direction: &DirectionReport, prefix: &str) -> Vec<Drawing>
         .iter()
         .filter_map(|report| report.figures.as_ref().ok().map(|figures| (report, figures)))
         .collect();
-    let parts = known.chunks(polar::CURVES).enumerate();
+    let parts = known.chunks(CURVES).enumerate();
     parts
         .flat_map(|(n, part)| {
             let prefix = if n == 0 { prefix.to_owned() } else { format!("{prefix}p{}", n + 1) };

@@ -6,7 +6,7 @@ use super::View;
 use super::table;
 use super::words;
 use crate::radio::{ErrorSize, Sampling};
-use crate::reception::{ArrayReport, FrequencyReport};
+use crate::reception::{ArrayReport, DirectionReport, FrequencyReport};
 use crate::report::Sheet;
 
 /// The patterns of every array: answer lines, warnings, tables, notes.
@@ -14,8 +14,9 @@ pub fn sheet(view: &View<'_>) -> Sheet {
     let mut sheet = Sheet::default();
     for (option, reports) in view.options {
         for report in reports {
-            let Answer { headlines, meaning, warnings } = answer(&name(view, option, report), report);
-            sheet.answer.extend([headlines, meaning, warnings].concat());
+            let Answer { headlines, meaning, warning } = answer(&name(view, option, report), report);
+            sheet.answer.extend([headlines, meaning].concat());
+            sheet.answer.extend(warning);
             sheet.tables.extend(table::tables(report, view.delays.get(&report.array)));
         }
     }
@@ -30,7 +31,7 @@ pub(super) struct Answer {
     /// What the first of them means, and whether an amplifier is needed.
     pub(super) meaning: Vec<String>,
     /// Where the figures are not to be relied on, on any band.
-    pub(super) warnings: Vec<String>,
+    pub(super) warning: Option<String>,
 }
 
 /// The array's name, with its option where that says more.
@@ -44,33 +45,37 @@ pub(super) fn name(view: &View<'_>, option: &str, report: &ArrayReport) -> Strin
 
 /// The answer on one array.
 pub(super) fn answer(name: &str, report: &ArrayReport) -> Answer {
-    let mut answer = Answer { headlines: Vec::new(), meaning: Vec::new(), warnings: warnings(name, report) };
+    let mut answer = Answer { headlines: Vec::new(), meaning: Vec::new(), warning: warning(name, report) };
     let several = report.directions.len() > 1;
     for direction in &report.directions {
         let Some(first) = direction.frequencies.first() else { continue };
         let towards = if several { format!(" towards {}", direction.bearing) } else { String::new() };
         let when = format!("{}{towards}", first.frequency);
-        match &first.figures {
-            Ok(figures) => {
-                answer.headlines.push(words::headline(name, &when, figures));
-                if answer.meaning.is_empty() {
-                    answer.meaning.push(words::meaning(figures));
-                    answer.meaning.push(words::amplifier_sentence(figures.noise.as_ref()));
-                }
-            }
-            Err(error) => {
-                answer.headlines.push(format!("{name} at {when} cannot be computed: {error}"));
+        if let Ok(figures) = &first.figures {
+            answer.headlines.push(words::headline(name, &when, figures));
+            if answer.meaning.is_empty() {
+                answer.meaning.push(words::meaning(figures));
+                answer.meaning.push(words::amplifier_sentence(figures.noise.as_ref()));
             }
         }
+        answer.headlines.extend(failures(name, direction, &towards));
     }
     answer
 }
 
-/// One line a reason, with the bands it holds for.
-fn warnings(name: &str, report: &ArrayReport) -> Vec<String> {
-    let all = || report.directions.iter().flat_map(|direction| &direction.frequencies);
+/// One line for each band of a direction that has no figures.
+fn failures(name: &str, direction: &DirectionReport, towards: &str) -> Vec<String> {
+    let line = |report: &FrequencyReport| {
+        let error = report.figures.as_ref().err()?;
+        Some(format!("{name} at {}{towards} cannot be computed: {error}", report.frequency))
+    };
+    direction.frequencies.iter().filter_map(line).collect()
+}
+
+/// Every reason with the bands it holds for; nothing when all figures are within the limits.
+fn warning(name: &str, report: &ArrayReport) -> Option<String> {
     let mut reasons: Vec<(String, Vec<String>)> = Vec::new();
-    for frequency in all() {
+    for frequency in frequencies(report) {
         let Some(reason) = reason(frequency) else { continue };
         let band = frequency.frequency.to_string();
         match reasons.iter_mut().find(|(known, _)| *known == reason) {
@@ -79,22 +84,19 @@ fn warnings(name: &str, report: &ArrayReport) -> Vec<String> {
             None => reasons.push((reason, vec![band])),
         }
     }
-    let line = |(reason, bands): (String, Vec<String>)| {
-        format!("warning: {name} at {}: {reason}", bands.join(" and "))
-    };
-    reasons.into_iter().map(line).collect()
+    let words = reasons.into_iter().map(|(reason, bands)| format!("at {} {reason}", bands.join(" and ")));
+    let words = words.collect::<Vec<_>>().join("; ");
+    (!words.is_empty()).then(|| {
+        format!(
+            "warning: {name}: {words}; the method was not shown to hold there, so these figures are rounded and only a \
+             rough guide"
+        )
+    })
 }
 
 /// Why a band's figures are not to be relied on.
 fn reason(report: &FrequencyReport) -> Option<String> {
-    match &report.figures {
-        Ok(figures) => figures.report.validity.why_not.as_ref().map(|why| {
-            format!(
-                "{why}; the method was not shown to hold there, so figures are rounded and only a rough guide"
-            )
-        }),
-        Err(error) => Some(format!("not computed, {error}")),
-    }
+    report.figures.as_ref().ok().and_then(|figures| figures.report.validity.why_not.clone())
 }
 
 /// What holds for all arrays.

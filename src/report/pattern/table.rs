@@ -10,7 +10,7 @@ use crate::reception::{ArrayReport, DirectionReport, Figures, FrequencyReport};
 use crate::report::Table;
 
 /// Columns that a page holds beside the names of the rows.
-const COLUMNS: usize = 5;
+const COLUMNS: usize = 3;
 
 /// One direction at one band.
 #[derive(Clone, Copy)]
@@ -84,11 +84,13 @@ pub(super) fn tables(report: &ArrayReport, delay: Option<&DelayChoice>) -> Vec<T
     };
     let heads =
         |columns: &[Column<'_>]| -> Vec<String> { columns.iter().map(|c| head(*c, several)).collect() };
+    // four columns are two and two, not three and one
+    let share = columns.len().div_ceil(columns.len().div_ceil(COLUMNS).max(1)).max(1);
     let mut tables = Vec::new();
-    for part in columns.chunks(COLUMNS) {
+    for part in columns.chunks(share) {
         tables.push(figures(format!("{}: what it hears{towards}", report.array), &heads(part), part));
     }
-    for part in columns.chunks(COLUMNS) {
+    for part in columns.chunks(share).filter(|part| part[0].report.names.len() > 1) {
         tables.push(weights(format!("{}: weights of the elements", report.array), &heads(part), part));
     }
     tables.extend(delay.and_then(|delay| delays(&report.array, delay, columns.first()?.report)));
@@ -139,7 +141,7 @@ fn weights(title: String, heads: &[String], columns: &[Column<'_>]) -> Table {
 /// The curve is made with nothing lost, at the design frequency.
 fn delays(array: &str, choice: &DelayChoice, design: &FrequencyReport) -> Option<Table> {
     let curve = choice.curve.as_ref()?;
-    let heads = ["#delay over step", "#RDF, dB", "#worst rear, dB", "#signal, dB", "remark"];
+    let heads = ["delay over step", "#RDF, dB", "#worst rear, dB", "#signal, dB", "remark"];
     let mut table = Table::new(
         format!("{array}: what the delay line buys and costs at {}, as designed", design.frequency),
         &heads,

@@ -61,10 +61,9 @@ impl Trust {
 
     /// P10 / P50 / P90.
     pub(super) fn quantiles(self, quantiles: &Quantiles) -> String {
-        let places = if self == Self::Within { 1 } else { 0 };
         let number = |value: f64| match self {
-            Self::Within => format!("{:.1}", rounded(value, places)),
-            Self::Outside => format!("{:.0}", rounded(value, places)),
+            Self::Within => format!("{:.1}", rounded(value, 1)),
+            Self::Outside => format!("{:.0}", rounded(value, 0)),
         };
         let three = [quantiles.p10, quantiles.p50, quantiles.p90].map(number).join(" / ");
         if self == Self::Within { three } else { format!("about {three}") }
@@ -92,7 +91,7 @@ pub(super) fn meaning(figures: &Figures) -> String {
     let directivity = &figures.report.directivity;
     let trust = Trust::of(figures);
     let times = 10_f64.powf(directivity.rdf_db / 10.0);
-    let times = if trust == Trust::Within { format!("{times:.0}") } else { format!("about {:.0}", times) };
+    let times = if trust == Trust::Within { format!("{times:.0}") } else { format!("about {times:.0}") };
     let rear = directivity.worst_rear.level_db;
     let behind = if rear > -3.0 {
         "somewhere behind or overhead it hears nearly as well as in front".to_owned()
@@ -145,10 +144,9 @@ pub(super) fn amplifier_sentence(noise: Option<&Noise>) -> String {
         _ => "needed",
     };
     let with = match noise.with_amplifier {
-        Some(with) if without >= NEEDLESS_BELOW_DB => format!(", with one in the hub by {:.1} dB", with.db()),
-        Some(_) => String::new(),
-        None if without >= NEEDLESS_BELOW_DB => "; the catalogue has none for a hub".to_owned(),
-        None => String::new(),
+        Some(_) | None if without < NEEDLESS_BELOW_DB => String::new(),
+        Some(with) => format!(", with one in the hub by {:.1} dB", with.db()),
+        None => "; the catalogue has none for a hub".to_owned(),
     };
     let by = if without < 0.05 { "less than 0.1 dB".to_owned() } else { format!("{without:.1} dB") };
     format!("amplifier: {verdict}; the receiver's own noise raises the floor by {by}{with}")
