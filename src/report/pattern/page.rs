@@ -164,7 +164,7 @@ fn azimuth(array: &str, direction: &DirectionReport, known: &Known<'_>, prefix: 
             lines: &lines,
             curves: &curves,
         }),
-        caption: format!("{array} towards {} true, seen from above.", direction.bearing),
+        caption: format!("{array} towards {} true from above, {}.", direction.bearing, bands(known)),
     }
 }
 
@@ -182,10 +182,17 @@ fn elevation(array: &str, direction: &DirectionReport, known: &Known<'_>, prefix
             curves: &curves,
         }),
         caption: format!(
-            "{array} from the side: towards {} on the right, behind on the left.",
+            "{array} from the side, {}: towards {} on the right, behind on the left.",
+            bands(known),
             direction.bearing
         ),
     }
+}
+
+/// The bands of a plot in words.
+fn bands(known: &Known<'_>) -> String {
+    let bands: Vec<String> = known.iter().map(|(report, _)| report.frequency.to_string()).collect();
+    bands.join(", ")
 }
 
 fn curve<'a>(direction: &DirectionReport, name: &'a str, points: &'a [CutPoint]) -> Curve<'a> {

@@ -86,12 +86,19 @@ pub(super) fn tables(report: &ArrayReport, delay: Option<&DelayChoice>) -> Vec<T
         |columns: &[Column<'_>]| -> Vec<String> { columns.iter().map(|c| head(*c, several)).collect() };
     // four columns are two and two, not three and one
     let share = columns.len().div_ceil(columns.len().div_ceil(COLUMNS).max(1)).max(1);
+    let parts: Vec<&[Column<'_>]> = columns.chunks(share).collect();
+    let title = |what: String, n: usize| match parts.len() {
+        1 => what,
+        all => format!("{what}, {} of {all}", n + 1),
+    };
     let mut tables = Vec::new();
-    for part in columns.chunks(share) {
-        tables.push(figures(format!("{}: what it hears{towards}", report.array), &heads(part), part));
+    for (n, part) in parts.iter().enumerate() {
+        let title = title(format!("{}: what it hears{towards}", report.array), n);
+        tables.push(figures(title, &heads(part), part));
     }
-    for part in columns.chunks(share).filter(|part| part[0].report.names.len() > 1) {
-        tables.push(weights(format!("{}: weights of the elements", report.array), &heads(part), part));
+    for (n, part) in parts.iter().enumerate().filter(|(_, part)| part[0].report.names.len() > 1) {
+        let title = title(format!("{}: weights of the elements", report.array), n);
+        tables.push(weights(title, &heads(part), part));
     }
     tables.extend(delay.and_then(|delay| delays(&report.array, delay, columns.first()?.report)));
     tables
