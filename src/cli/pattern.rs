@@ -31,7 +31,7 @@ impl Pattern {
         let weighting = if self.ideal { Weighting::Ideal } else { Weighting::Built };
         let designs: Vec<&Design> = work.results.iter().map(|result| &result.design).collect();
         let options = pattern::reports(&work.project, &designs, weighting);
-        let delays = pattern::delays(&designs);
+        let delays = pattern::delays(&work.project, &designs);
         let view =
             View { project: &work.project, hash: &work.hash, weighting, options: &options, delays: &delays };
         if let Some(path) = &self.page {

@@ -8,12 +8,13 @@ mod words;
 use std::collections::BTreeMap;
 
 use num_complex::Complex64;
+use rust_decimal::Decimal;
 use serde_json::{Value, json};
 
 use super::machine::{document, rounded};
-use crate::design::{DelayChoice, Design};
+use crate::design::{self, Design};
 use crate::project::Project;
-use crate::radio::{AtElevation, Quantiles};
+use crate::radio::{AtElevation, DelayCurve, Quantiles};
 use crate::reception::{self, ArrayReport, DirectionReport, Figures, FrequencyReport, Noise, Weighting};
 
 pub use page::page;
@@ -37,7 +38,7 @@ pub struct View<'a> {
     /// The reports.
     pub options: &'a [OptionReports],
     /// The delay of each array that has one, by array name.
-    pub delays: &'a BTreeMap<String, DelayChoice>,
+    pub delays: &'a BTreeMap<String, Delay>,
 }
 
 /// Reports on every array of every design at every band of the project.
@@ -53,13 +54,26 @@ pub fn reports(project: &Project, designs: &[&Design], weighting: Weighting) -> 
         .collect()
 }
 
-/// The delays of every array, by array name.
-pub fn delays(designs: &[&Design]) -> BTreeMap<String, DelayChoice> {
-    let arrays = designs.iter().flat_map(|design| &design.arrays);
-    arrays
-        .filter(|array| array.delay.curve.is_some())
-        .map(|array| (array.plan.name.clone(), array.delay.clone()))
-        .collect()
+/// The delay line of an array, and what other lengths would give.
+#[derive(Clone, Debug)]
+pub struct Delay {
+    /// Its electrical length over the row step.
+    pub ratio: Decimal,
+    /// What each ratio from 0.4 to 1.0 would give at the design frequency.
+    pub curve: DelayCurve,
+}
+
+/// The delays of every array that has one, by array name.
+pub fn delays(project: &Project, designs: &[&Design]) -> BTreeMap<String, Delay> {
+    let mut delays = BTreeMap::new();
+    for array in designs.iter().flat_map(|design| &design.arrays) {
+        if !delays.contains_key(&array.plan.name)
+            && let Some(curve) = design::delay_curve(project, array)
+        {
+            delays.insert(array.plan.name.clone(), Delay { ratio: array.ratio, curve });
+        }
+    }
+    delays
 }
 
 /// The `pattern` document.

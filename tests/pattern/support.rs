@@ -6,12 +6,12 @@ use std::path::{Path, PathBuf};
 
 use arraywright::arrays::{self, Context, HubAmplifier, LineCost, Names};
 use arraywright::catalogue::{self, Catalogue};
-use arraywright::design::{self, DelayChoice, Design};
+use arraywright::design::{self, Design};
 use arraywright::plan::{Allowances, ArrayPlan, Cables, LineLength, choose_cables, measure};
 use arraywright::problem::Problems;
 use arraywright::project::{self, Project};
 use arraywright::reception::{self, ArrayReport, Ends, NoiseSite, Subject, Weighting};
-use arraywright::report::pattern::{self, OptionReports, View};
+use arraywright::report::pattern::{self, Delay, OptionReports, View};
 use arraywright::units::{Decibel, Diameter, Length};
 use rust_decimal::Decimal;
 use serde_json::Value;
@@ -43,7 +43,7 @@ pub(crate) struct Settled {
     pub(crate) project: Project,
     pub(crate) designs: Vec<Design>,
     pub(crate) options: Vec<OptionReports>,
-    pub(crate) delays: BTreeMap<String, DelayChoice>,
+    pub(crate) delays: BTreeMap<String, Delay>,
     pub(crate) weighting: Weighting,
 }
 
@@ -54,7 +54,7 @@ impl Settled {
         assert!(!settled.problems.has_errors(), "{:?}", settled.problems);
         let designs: Vec<&Design> = settled.designs.iter().collect();
         let options = pattern::reports(&project, &designs, weighting);
-        let delays = pattern::delays(&designs);
+        let delays = pattern::delays(&project, &designs);
         Self { options, delays, weighting, designs: settled.designs, project }
     }
 
@@ -92,6 +92,7 @@ impl Expanded {
             branch_cost: LineCost { leg: 1.0, onward: 1.0 },
             main_cost: LineCost { leg: 1.0, onward: 1.0 },
             amplifier: HubAmplifier::Absent,
+            balance: None,
         };
         let plan = arrays::expand(spec, Decimal::ONE, &context, &mut Names::default());
         let cables = choose_cables(spec, catalogue, project.frequency, &mut Problems::default());

@@ -5,6 +5,7 @@
 
 use std::fmt::Write as _;
 
+use super::svg::{escaped, num};
 use crate::radio::CutPoint;
 use crate::units::Bearing;
 
@@ -420,33 +421,6 @@ fn wrapped(text: &str, letters: usize) -> Vec<String> {
 /// How much of a word fits up to and with its last hyphen within `room`.
 fn breakable(word: &[char], room: usize) -> Option<usize> {
     word[..room.min(word.len())].iter().rposition(|c| *c == '-').map(|at| at + 1)
-}
-
-/// A number with at most two decimals; never `NaN`, never minus nothing.
-fn num(value: f64) -> String {
-    if !value.is_finite() {
-        return "0".to_owned();
-    }
-    let text = format!("{value:.2}");
-    let text = text.trim_end_matches('0').trim_end_matches('.');
-    if text == "-0" || text.is_empty() { "0".to_owned() } else { text.to_owned() }
-}
-
-/// Text made safe inside SVG and its attributes.
-fn escaped(text: &str) -> String {
-    let mut out = String::with_capacity(text.len());
-    for c in text.chars() {
-        match c {
-            '&' => out.push_str("&amp;"),
-            '<' => out.push_str("&lt;"),
-            '>' => out.push_str("&gt;"),
-            '"' => out.push_str("&quot;"),
-            '\'' => out.push_str("&#39;"),
-            c if c.is_control() => out.push(' '),
-            c => out.push(c),
-        }
-    }
-    out
 }
 
 #[cfg(test)]

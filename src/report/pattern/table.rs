@@ -2,9 +2,8 @@
 
 use rust_decimal::prelude::ToPrimitive;
 
-use super::normalised;
 use super::words::{self, Trust};
-use crate::design::DelayChoice;
+use super::{Delay, normalised};
 use crate::radio::DelayPoint;
 use crate::reception::{ArrayReport, DirectionReport, Figures, FrequencyReport};
 use crate::report::Table;
@@ -72,7 +71,7 @@ fn nothing() -> String {
 }
 
 /// Every table of one array: figures, weights, and what the delay buys.
-pub(super) fn tables(report: &ArrayReport, delay: Option<&DelayChoice>) -> Vec<Table> {
+pub(super) fn tables(report: &ArrayReport, delay: Option<&Delay>) -> Vec<Table> {
     let mut columns = Vec::new();
     for direction in &report.directions {
         columns.extend(direction.frequencies.iter().map(|report| Column { direction, report }));
@@ -146,8 +145,8 @@ fn weights(title: String, heads: &[String], columns: &[Column<'_>]) -> Table {
 
 /// What a longer or shorter delay line would buy and cost; the curve's tenths, its best points and the one chosen.
 /// The curve is made with nothing lost, at the design frequency.
-fn delays(array: &str, choice: &DelayChoice, design: &FrequencyReport) -> Option<Table> {
-    let curve = choice.curve.as_ref()?;
+fn delays(array: &str, choice: &Delay, design: &FrequencyReport) -> Option<Table> {
+    let curve = &choice.curve;
     let heads = ["delay over step", "#RDF, dB", "#worst rear, dB", "#signal, dB", "remark"];
     let mut table = Table::new(
         format!("{array}: what the delay line buys and costs at {}, as designed", design.frequency),
