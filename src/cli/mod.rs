@@ -8,6 +8,7 @@ mod failure;
 mod load;
 mod output;
 mod parts;
+mod pattern;
 mod start;
 mod why;
 mod workorder;
@@ -36,6 +37,8 @@ enum Command {
     Check(check::Check),
     /// List what is needed, with reasons
     Parts(parts::Parts),
+    /// Say what the arrays hear: directivity, lobes, beam, and what errors do to them
+    Pattern(pattern::Pattern),
     /// Price what is needed
     Estimate(estimate::Estimate),
     /// Put options side by side
@@ -104,6 +107,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
         Command::Start(command) => command.run(),
         Command::Check(command) => command.run(),
         Command::Parts(command) => command.run(),
+        Command::Pattern(command) => command.run(),
         Command::Estimate(command) => command.run(),
         Command::Compare(command) => command.run(),
         Command::Workorder(command) => command.run(),

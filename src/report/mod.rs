@@ -6,6 +6,7 @@ pub mod drawing;
 pub mod estimate;
 pub mod machine;
 pub mod parts;
+pub mod pattern;
 pub mod sheet;
 pub mod why;
 

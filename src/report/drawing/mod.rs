@@ -8,6 +8,7 @@ mod place;
 mod plan_dimension;
 mod plan_key;
 mod plan_land;
+pub mod polar;
 mod sign;
 pub mod site_plan;
 mod svg;
