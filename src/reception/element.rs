@@ -46,12 +46,16 @@ fn low_wire(wire: &WireElement, ends: Ends) -> radio::ElementKind {
 }
 
 fn termination(given: project::Termination, ends: Ends) -> radio::Termination {
-    let Ends::AsBuilt { earth, resistor } = ends else { return radio::Termination::Matched };
-    let total =
-        |resistor: Resistance| radio::Termination::Total(Resistance::new(resistor.ohms() + earth.ohms()));
+    let total = |resistor: Option<Resistance>| match ends {
+        Ends::Matched => radio::Termination::Matched,
+        Ends::AsBuilt { earth, resistor: computed } => {
+            let ohms = resistor.unwrap_or(computed).ohms() + earth.ohms();
+            radio::Termination::Total(Resistance::new(ohms))
+        }
+    };
     match given {
-        project::Termination::Computed => total(resistor),
-        project::Termination::Resistor(resistor) => total(resistor),
+        project::Termination::Computed => total(None),
+        project::Termination::Resistor(resistor) => total(Some(resistor)),
         project::Termination::Matched => radio::Termination::Matched,
         project::Termination::Reflection(reflection) => {
             radio::Termination::Reflection(reflection.to_f64().unwrap_or_default())

@@ -89,7 +89,7 @@ fn text_of(c: &Composition) -> String {
     };
     let both = c.endfire && c.row > 1;
     let staged = c.endfire || c.row > 1;
-    let mut feed = String::new();
+    let mut feed = "amplifier = \"none\"\n".to_owned();
     let by_row = both && c.by_row;
     if by_row {
         feed.push_str("combining = \"by-row\"\n");
