@@ -39,9 +39,8 @@ struct ReelView {
     delays: String,
     velocity_factor: String,
     proofs: Vec<Proof>,
-    has_unknown_trim: bool,
     has_rough_trim: bool,
-    has_unknown_tolerance: bool,
+    has_free_pieces: bool,
 }
 
 #[derive(Debug, Serialize)]
@@ -142,12 +141,11 @@ fn reel_view(
         velocity_factor: delays
             .first()
             .and_then(|piece| piece.electrical.as_ref())
-            .map(|electrical| electrical.velocity_factor.to_string())
+            .map(|electrical| show::velocity(electrical.velocity_factor))
             .unwrap_or_default(),
         delays: show::names(delays.iter().map(|piece| piece.label.as_str())),
         has_rough_trim: proofs.iter().any(|proof| proof.is_rough),
-        has_unknown_trim: proofs.iter().any(|proof| proof.trim == "–"),
-        has_unknown_tolerance: proofs.iter().any(|proof| proof.tolerance == "–"),
+        has_free_pieces: proofs.iter().any(|proof| proof.trim == "–" || proof.tolerance == "–"),
         proofs,
     }
 }

@@ -37,8 +37,8 @@ pub enum LabelKind {
     Station,
 }
 
-/// Strips on one sheet: two columns of six.
-pub const PER_SHEET: usize = 12;
+/// Strips on one sheet: two columns of five, which leaves room for a head on Letter paper.
+pub const PER_SHEET: usize = 10;
 
 const WIDE: f64 = 84.0;
 const HIGH: f64 = 34.0;
@@ -60,7 +60,7 @@ pub fn draw(strips: &[LabelStrip], name: &str, prefix: &str) -> String {
     svg.finish(name)
 }
 
-#[expect(clippy::cast_precision_loss, reason = "six rows at most")]
+#[expect(clippy::cast_precision_loss, reason = "five rows at most")]
 fn row_y(row: usize) -> f64 {
     row as f64 * HIGH
 }
