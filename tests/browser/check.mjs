@@ -128,6 +128,9 @@ function printed(pdf, { hash, sheet, landscape, names }) {
     if (!whole.includes(hash)) found.push(`no hash on page ${k + 1}`);
     if (!whole.includes("Check the hash before use")) found.push(`no foot on page ${k + 1}`);
     if (!words.some(word => word[5] === sheet)) found.push(`no sheet name on page ${k + 1}`);
+    // Everything but the last page is used at least to its middle.
+    const lowest = Math.max(...words.map(word => +word[4]).filter(y => y < h - 14 * POINT));
+    if (k + 1 < pages.length && lowest < 0.45 * h) found.push(`page ${k + 1} is mostly blank`);
     if (words.length < 36) found.push(`page ${k + 1} is all but empty`);
     for (const [, x0, y0, x1, y1, word] of words) {
       if (+x0 < edge || +y0 < edge || +x1 > w - edge || +y1 > h - edge) found.push(`within 5 mm of the paper's edge: ${word}`);

@@ -4,7 +4,7 @@ use std::fs;
 use std::path::{Path, PathBuf};
 use std::process::Command;
 
-use crate::sample::{Sample, demos, hostile};
+use crate::sample::{Sample, demos, format, hostile};
 
 /// Where the pages are left for people to look at.
 fn folder() -> PathBuf {
@@ -25,7 +25,7 @@ fn write_pages() -> Vec<PathBuf> {
     samples.push(("hostile".to_owned(), hostile()));
     let mut paths = Vec::new();
     for (sample, rendered) in samples.into_iter().map(|(name, sample)| (name, sample.render())) {
-        for (name, text) in rendered.iter().filter(|(name, _)| name.ends_with(".html")) {
+        for (name, text) in format(&rendered, "html") {
             let path = folder.join(format!("{sample}--{}", name.replace('/', "--")));
             fs::write(&path, text).expect("a page written");
             paths.push(path);
@@ -87,7 +87,7 @@ fn pages_are_valid_html() {
     let folder = Path::new(env!("CARGO_TARGET_TMPDIR")).join("valid");
     fs::create_dir_all(&folder).expect("a folder for the pages");
     let mut pages = Vec::new();
-    for (name, text) in hostile().render().iter().filter(|(name, _)| name.ends_with(".html")) {
+    for (name, text) in format(&hostile().render(), "html") {
         let path = folder.join(name);
         fs::write(&path, text).expect("a page written");
         pages.push(path);

@@ -80,6 +80,14 @@ fn read(name: &str, text: &str, stock: Option<(&str, &str)>) -> Project {
     project.unwrap_or_else(|| panic!("{name}: {problems:#?}"))
 }
 
+/// The files of one format.
+pub(crate) fn format<'a>(
+    files: &'a BTreeMap<String, String>,
+    extension: &'a str,
+) -> impl Iterator<Item = (&'a String, &'a String)> {
+    files.iter().filter(move |(name, _)| Path::new(name).extension().is_some_and(|own| own == extension))
+}
+
 /// Every demo project's folder name.
 pub(crate) fn demos() -> Vec<String> {
     let entries = fs::read_dir(demo_folder()).expect("the demo projects");
@@ -105,8 +113,8 @@ pub(crate) fn hostile() -> Sample {
     let mut project = read("hostile.toml", HOSTILE_PROJECT, None);
     project.title =
         format!("{HOSTILE} and a title so long that it has to be cut in the running head of the page");
-    project.arrays[0].name = HOSTILE.to_owned();
-    project.keep_out[0].name = HOSTILE.to_owned();
+    HOSTILE.clone_into(&mut project.arrays[0].name);
+    HOSTILE.clone_into(&mut project.keep_out[0].name);
     let mut catalogue = catalogue::built_in();
     for part in catalogue.parts.values_mut() {
         part.description = format!("{} {HOSTILE}", part.description);
@@ -140,6 +148,7 @@ heading   = "40 deg"
 centre    = { east = "60 m", north = "-40 m" }
 element.vertical = { height = "6 m", active = true }
 endfire   = { count = 2, spacing = "18.3 m" }
+feed      = { delay-style = "merged" }
 [[keep-out]]
 name      = "replaced"
 polygon   = [{ east = "-40 m", north = "150 m" }, { east = "90 m", north = "150 m" }, { east = "90 m", north = "110 m" }]

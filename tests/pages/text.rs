@@ -4,7 +4,7 @@ use std::collections::BTreeMap;
 
 use arraywright::report::document::{Sheet, TemplateError, template_names};
 
-use crate::sample::{Sample, demos, hostile};
+use crate::sample::{Sample, demos, format, hostile};
 
 #[test]
 fn every_demo_gets_every_sheet_in_both_formats() {
@@ -43,7 +43,7 @@ fn options_do_not_mix() {
 
 #[test]
 fn a_hostile_name_stays_text_in_html() {
-    for (name, text) in hostile().render().iter().filter(|(name, _)| name.ends_with(".html")) {
+    for (name, text) in format(&hostile().render(), "html") {
         assert!(!text.contains("<script"), "{name}");
         assert_eq!(text.matches("</style>").count(), 1, "{name}");
         assert!(!text.contains("<b>#1"), "{name}");
@@ -53,13 +53,13 @@ fn a_hostile_name_stays_text_in_html() {
 
 #[test]
 fn a_hostile_name_stays_text_in_markdown() {
-    for (name, text) in hostile().render().iter().filter(|(name, _)| name.ends_with(".md")) {
+    for (name, text) in format(&hostile().render(), "md") {
         assert!(!text.contains("<script") && !text.contains("<b>"), "{name}");
         assert!(!text.contains("| `b`") && !text.contains("[z](u)"), "{name}");
         assert_eq!(torn_row(text), None, "{name} has a row with another number of cells than its head");
     }
     for demo in demos() {
-        for (name, text) in Sample::demo(&demo).render().iter().filter(|(name, _)| name.ends_with(".md")) {
+        for (name, text) in format(&Sample::demo(&demo).render(), "md") {
             assert_eq!(torn_row(text), None, "{demo}: {name}");
         }
     }
@@ -100,6 +100,14 @@ fn the_delay_stops_the_bench_until_the_reel_is_measured() {
     let files = Sample::demo("two-ways-north-west").render();
     assert!(files["echelon/cuts.html"].contains("STOP. Measure this reel first."));
     assert!(!files["broadside/cuts.html"].contains("STOP. Measure this reel first."));
+}
+
+#[test]
+fn a_branch_with_its_delay_merged_stops_the_bench_too() {
+    let files = hostile().render();
+    let stop = files["cuts.md"].split("Measure this reel first.** ").nth(1).expect("a hold point");
+    let labels = stop.split(" is cut for").next().expect("labels");
+    assert!(labels.contains("D1") && labels.contains("B4"), "{labels}");
 }
 
 #[test]

@@ -8,7 +8,7 @@ use crate::cutting::{Cut, CutReel};
 use crate::pricing::PartCutPlan;
 use crate::report::drawing::cut_strip::{self, Fill, Strip, StripPiece};
 use crate::takeoff::{Piece, PieceRole};
-use crate::units::Length;
+use crate::units::ElectricalLength;
 
 /// The cut list of one option.
 #[derive(Debug, Serialize)]
@@ -39,9 +39,8 @@ struct ReelView {
     delays: String,
     velocity_factor: String,
     proofs: Vec<Proof>,
-    has_unknown_trim: bool,
     has_rough_trim: bool,
-    has_unknown_tolerance: bool,
+    has_free_pieces: bool,
 }
 
 #[derive(Debug, Serialize)]
@@ -128,7 +127,7 @@ fn reel_view(
     let pieces: Vec<(&Cut, Option<&Piece>)> =
         reel.cuts.iter().map(|cut| (cut, piece_of(option, &cut.label))).collect();
     let known: Vec<&Piece> = pieces.iter().filter_map(|(_, piece)| *piece).collect();
-    let delays: Vec<&Piece> = known.iter().filter(|piece| is_trimmed(piece)).copied().collect();
+    let delays: Vec<&Piece> = known.iter().filter(|piece| is_trimmed(option, piece)).copied().collect();
     let proofs = proof::proofs(&known);
     let keep = reel.left >= input.project.practice.keep_at_least;
     ReelView {
@@ -142,22 +141,20 @@ fn reel_view(
         velocity_factor: delays
             .first()
             .and_then(|piece| piece.electrical.as_ref())
-            .map(|electrical| electrical.velocity_factor.to_string())
+            .map(|electrical| show::velocity(electrical.velocity_factor))
             .unwrap_or_default(),
         delays: show::names(delays.iter().map(|piece| piece.label.as_str())),
         has_rough_trim: proofs.iter().any(|proof| proof.is_rough),
-        has_unknown_trim: proofs.iter().any(|proof| proof.trim == "–"),
-        has_unknown_tolerance: proofs.iter().any(|proof| proof.tolerance == "–"),
+        has_free_pieces: proofs.iter().any(|proof| proof.trim == "–" || proof.tolerance == "–"),
         proofs,
     }
 }
 
 /// A piece that is trimmed to an electrical length: a delay line, or a branch with the delay merged into it.
-///
-/// The trim allowance tells them apart: everything else is cut only for its two strips.
-fn is_trimmed(piece: &Piece) -> bool {
-    piece.role == PieceRole::Delay
-        || (piece.role.is_coax() && piece.cut - piece.finished >= Length::from_mm(300))
+fn is_trimmed(option: &OptionInput<'_>, piece: &Piece) -> bool {
+    let Some((array, line)) = piece.line else { return false };
+    let array = option.design.arrays.get(array);
+    array.is_some_and(|array| array.plan.feed.line(line).delay > ElectricalLength::ZERO)
 }
 
 /// The piece behind a label of the plan; equal pieces may carry a hyphen and a number.

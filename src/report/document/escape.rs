@@ -33,7 +33,6 @@ fn followed_by_blank(text: &str, at: usize) -> Option<usize> {
 }
 
 /// The filter `css`: a value inside a CSS string in double quotes.
-#[expect(clippy::needless_pass_by_value, reason = "the shape that the template engine asks for")]
 pub(super) fn css(text: &str, _: Kwargs, _: &State) -> String {
     let mut out = String::with_capacity(text.len());
     for c in text.chars() {

@@ -61,7 +61,8 @@ fn strips(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<LabelStrip> {
                 first: format!("this end {this}"),
                 second: format!("far end {far}"),
                 text: machine_text(piece, this, far),
-                foot: format!("wrap this part round the cable · {} · {}", piece.label, input.hash),
+                foot: format!("wrap this round · {} · {}", piece.label, input.hash),
+                more: String::new(),
                 kind: LabelKind::Cable,
             });
         }
@@ -77,7 +78,8 @@ fn strips(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<LabelStrip> {
                 id: point.name.clone(),
                 first: words.to_owned(),
                 second: format!("hash {}", input.hash),
-                text: "Receive antenna, low level. Do not cut, do not drive over.".to_owned(),
+                text: "Receive antenna, low level.".to_owned(),
+                more: "Do not cut, do not drive over.".to_owned(),
                 foot: "call: ______________________".to_owned(),
                 kind,
             });

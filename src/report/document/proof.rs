@@ -57,7 +57,7 @@ fn proof(piece: &Piece, electrical: &PieceElectrical) -> Proof {
         group: show::or_dash(&piece.match_group),
         electrical: format!("{:.3}", electrical.length.metres()),
         degrees: format!("{:.1}", electrical.length.degrees(electrical.frequency)),
-        velocity_factor: electrical.velocity_factor.to_string(),
+        velocity_factor: show::velocity(electrical.velocity_factor),
         trim: dip(|trim| trim.open),
         shorted: dip(|trim| trim.shorted),
         is_rough: electrical.trim.is_some_and(|trim| trim.basis == TrimBasis::OneNumber),

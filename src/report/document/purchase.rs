@@ -68,7 +68,7 @@ struct ShedRow {
 #[derive(Debug, Serialize)]
 struct Reel {
     part: String,
-    reel: String,
+    name: String,
     length: String,
     pieces: String,
     left: String,
@@ -157,7 +157,7 @@ fn reels(option: &OptionInput<'_>) -> Vec<Reel> {
         for (n, reel) in plan.plan.reels.iter().enumerate() {
             rows.push(Reel {
                 part: plan.part.clone(),
-                reel: reel_name(n + 1, reel),
+                name: reel_name(n + 1, reel),
                 length: show::metres(reel.length),
                 pieces: show::names(reel.cuts.iter().map(|cut| cut.label.as_str())),
                 left: show::metres(reel.left),

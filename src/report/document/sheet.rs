@@ -93,9 +93,8 @@ impl Sheet {
             Self::Purchase => "whoever orders",
             Self::Cuts => "bench",
             Self::Labels => "bench; print at 100 %",
-            Self::Plan => "every crew",
             Self::Stakes => "survey crew",
-            Self::Build => "every crew",
+            Self::Plan | Self::Build => "every crew",
             Self::Estimate => "owner",
         }
     }

@@ -4,7 +4,7 @@ use rust_decimal::Decimal;
 
 use crate::catalogue::{Catalogue, Source};
 use crate::pricing::BillLine;
-use crate::units::{Angle, Bearing, Currency, Length, Money};
+use crate::units::{Angle, Bearing, Currency, Length, Money, VelocityFactor};
 
 /// Metres without unit: two decimals, three where the millimetre matters.
 pub(super) fn metres(length: Length) -> String {
@@ -22,6 +22,11 @@ pub(super) fn tape(metres: f64) -> String {
 pub(super) fn quantity(value: Decimal, unit: &str) -> String {
     let value = value.normalize();
     if unit.is_empty() || unit == "each" { value.to_string() } else { format!("{value} {unit}") }
+}
+
+/// A velocity factor to four decimals: nobody measures a fifth.
+pub(super) fn velocity(factor: VelocityFactor) -> String {
+    factor.ratio().round_dp(4).normalize().to_string()
 }
 
 /// Money rounded to the currency's minor unit, without its code.

@@ -61,7 +61,7 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
         let layout = &array.plan.layout;
         let mut rows = Vec::new();
         let mut previous: Option<&Point> = None;
-        for point in &layout.points {
+        for point in walk(layout) {
             if seen.contains(&point.name.as_str()) {
                 continue;
             }
@@ -84,6 +84,25 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
         checks: option.design.arrays.iter().flat_map(|array| checks(&array.plan.layout)).collect(),
         arrays,
     }
+}
+
+/// The points in the order of a walk: one wire out, the next one back, then the hubs, the receiver last.
+fn walk(layout: &Layout) -> Vec<&Point> {
+    let mut groups: Vec<(&str, Vec<&Point>)> = Vec::new();
+    for point in layout.points.iter().filter(|point| point.kind != PointKind::Receiver) {
+        let stem = point.name.split('-').next().unwrap_or_default();
+        match groups.iter_mut().find(|(known, _)| *known == stem) {
+            Some((_, points)) => points.push(point),
+            None => groups.push((stem, vec![point])),
+        }
+    }
+    let there_and_back = groups.into_iter().enumerate().flat_map(|(n, (_, mut points))| {
+        if n % 2 == 1 {
+            points.reverse();
+        }
+        points
+    });
+    there_and_back.chain(layout.points.iter().filter(|point| point.kind == PointKind::Receiver)).collect()
 }
 
 /// The stake that stands on the datum, if one does.

@@ -14,6 +14,8 @@ pub struct LabelStrip {
     pub second: String,
     /// The machine text, or a sentence.
     pub text: String,
+    /// A second sentence; empty for a cable.
+    pub more: String,
     /// The foot of the strip.
     pub foot: String,
     /// Whether the foot is wrapped round a cable.
@@ -35,8 +37,8 @@ pub enum LabelKind {
     Station,
 }
 
-/// Strips on one sheet: two columns of six.
-pub const PER_SHEET: usize = 12;
+/// Strips on one sheet: two columns of five, which leaves room for a head on Letter paper.
+pub const PER_SHEET: usize = 10;
 
 const WIDE: f64 = 84.0;
 const HIGH: f64 = 34.0;
@@ -58,7 +60,7 @@ pub fn draw(strips: &[LabelStrip], name: &str, prefix: &str) -> String {
     svg.finish(name)
 }
 
-#[expect(clippy::cast_precision_loss, reason = "six rows at most")]
+#[expect(clippy::cast_precision_loss, reason = "five rows at most")]
 fn row_y(row: usize) -> f64 {
     row as f64 * HIGH
 }
@@ -84,8 +86,9 @@ fn draw_strip(svg: &mut Svg, strip: &LabelStrip, (x, y): (f64, f64)) {
     svg.text((at, y + 13.0), id, &strip.id);
     let right = x + if sign.is_some() { 49.0 } else { 40.0 };
     let room = x + WIDE - right - 1.5;
-    svg.text((right, y + 7.5), Type::bold(4.4), &fitted(Type::bold(4.4), &strip.first, room));
-    svg.text((right, y + 13.0), Type::plain(4.2), &fitted(Type::plain(4.2), &strip.second, room));
+    let (bold, plain) = (Type::bold(4.0), Type::plain(4.0));
+    svg.text((right, y + 7.5), bold, &fitted(bold, &strip.first, room));
+    svg.text((right, y + 13.0), plain, &fitted(plain, &strip.second, room));
     if strip.kind == LabelKind::Cable {
         let mono = Type::bold(4.2).mono();
         svg.text((x + 4.0, y + 20.6), mono, &fitted(mono, &strip.text, WIDE - 6.0));
@@ -94,8 +97,9 @@ fn draw_strip(svg: &mut Svg, strip: &LabelStrip, (x, y): (f64, f64)) {
         svg.text((x + WIDE / 2.0, y + 29.6), foot, &fitted(foot, &strip.foot, WIDE - 4.0));
     } else {
         let small = Type::plain(3.2);
-        svg.text((x + 4.0, y + 21.6), small, &fitted(small, &strip.text, WIDE - 6.0));
-        svg.text((x + 4.0, y + 28.6), small, &fitted(small, &strip.foot, WIDE - 6.0));
+        for (row, text) in [(20.0, &strip.text), (24.6, &strip.more), (30.0, &strip.foot)] {
+            svg.text((x + 4.0, y + row), small, &fitted(small, text, WIDE - 6.0));
+        }
     }
 }
 

@@ -4,7 +4,7 @@ use super::board::{Board, angle, apart, centroid, normal};
 use super::place::{Point as Paper, Rect};
 use super::svg::{Anchor, Type};
 use crate::design::Design;
-use crate::plan::{ArrayPlan, SitePosition};
+use crate::plan::{ArrayPlan, Element, SitePosition};
 use crate::units::Length;
 
 /// The length of every wire along it, and the distance between neighbours outside the array.
@@ -19,11 +19,8 @@ pub(super) fn draw_dimensions(board: &mut Board, design: &Design) {
             let at = (a.0 + 0.62 * (b.0 - a.0), a.1 + 0.62 * (b.1 - a.1));
             let words = format!("{name}: {}", span.length);
             if kind.width(&words) < apart(a, b) {
-                let (nx, ny) = normal(a, b);
-                let outward = (at.0 - middle.0) * nx + (at.1 - middle.1) * ny;
-                // Outside the array, and above a wire that is its middle.
-                let below = if outward.abs() < 0.5 { false } else { outward * ny > 0.0 };
-                let lift = if below { -1.2 - 0.75 * kind.size } else { 1.2 };
+                let lift =
+                    if more_room_below(board, plan, (a, b), at) { -1.2 - 0.75 * kind.size } else { 1.2 };
                 board.svg.turned_text(at, angle(a, b), lift, kind, &words);
             }
         }
@@ -31,20 +28,45 @@ pub(super) fn draw_dimensions(board: &mut Board, design: &Design) {
     }
 }
 
-/// The distance of elements that are neighbours, each length once.
+/// Whether the nearest other wire is farther off on the lower side of a wire than on its upper side.
+fn more_room_below(board: &Board, plan: &ArrayPlan, (a, b): (Paper, Paper), at: Paper) -> bool {
+    let (nx, ny) = normal(a, b);
+    // The normal points to the right of the wire's run, which is below when it points down the paper.
+    let down = if ny > 0.0 { 1.0 } else { -1.0 };
+    let (mut above, mut below) = (f64::INFINITY, f64::INFINITY);
+    for span in &plan.layout.spans {
+        let middle = board.ground.paper(plan.layout.point(span.from).site);
+        let off = ((middle.0 - at.0) * nx + (middle.1 - at.1) * ny) * down;
+        if off > 0.5 {
+            below = below.min(off);
+        } else if off < -0.5 {
+            above = above.min(-off);
+        }
+    }
+    below > above
+}
+
+/// The step within a cell and the spacing of each row, each length once, rear rows first.
 fn neighbours(board: &mut Board, plan: &ArrayPlan, middle: Paper) {
-    let places: Vec<SitePosition> =
-        plan.layout.elements.iter().map(|element| plan.layout.point(element.feed_point).site).collect();
+    let elements = &plan.layout.elements;
+    let mut pairs: Vec<(&Element, &Element)> = Vec::new();
+    let step = elements.windows(2).map(|two| two[0].at.distance_m(two[1].at)).fold(f64::INFINITY, f64::min);
+    let steps = elements.windows(2).filter(|two| two[0].at.distance_m(two[1].at) < 1.2 * step);
+    pairs.extend(steps.map(|two| (&two[0], &two[1])));
+    for one in elements {
+        let beside = |other: &&Element| {
+            (other.at.forward_m() - one.at.forward_m()).abs() < 0.01 && other.at.right_m() > one.at.right_m()
+        };
+        let nearest = elements.iter().filter(beside).min_by(|a, b| a.at.right_m().total_cmp(&b.at.right_m()));
+        pairs.extend(nearest.map(|other| (one, other)));
+    }
+    pairs.sort_by(|a, b| a.0.at.forward_m().total_cmp(&b.0.at.forward_m()));
     let mut drawn: Vec<Length> = Vec::new();
-    for (n, a) in places.iter().enumerate() {
-        for b in places.iter().skip(n + 1) {
-            let length = Length::from_metres_nearest(a.distance_m(*b));
-            // Neighbours have nobody between them, nearer to both than they are to each other.
-            let between =
-                |c: &SitePosition| a.distance_m(*c).max(b.distance_m(*c)) < a.distance_m(*b) - 0.001;
-            if !drawn.contains(&length) && !places.iter().any(between) && dimension(board, *a, *b, middle) {
-                drawn.push(length);
-            }
+    for (a, b) in pairs {
+        let length = Length::from_metres_nearest(a.at.distance_m(b.at));
+        let site = |element: &Element| plan.layout.point(element.feed_point).site;
+        if !drawn.contains(&length) && dimension(board, site(a), site(b), middle) {
+            drawn.push(length);
         }
     }
 }

@@ -1,5 +1,7 @@
 //! What stands beside a site plan: the key, the scale bar, the north arrow.
 
+use std::fmt::Write as _;
+
 use super::ground::Ground;
 use super::place::{Point, Rect, Taken};
 use super::sign::{self, Sign};
@@ -109,10 +111,11 @@ pub(super) fn draw_north(svg: &mut Svg, taken: &mut Taken, area: Rect, declinati
     let mut body = format!(r#"<g transform="translate({} {})">"#, num(x), num(y));
     body.push_str(r##"<path d="M0 -18L3.4 -7L0 -9.5Z"/><path d="M0 -18L-3.4 -7L0 -9.5Z" fill="#fff" stroke="#000" stroke-width=".25"/><path d="M0 -9V8" stroke="#000" stroke-width=".35"/>"##);
     if let Some(angle) = declination {
-        body.push_str(&format!(
+        let _ = write!(
+            body,
             r##"<g transform="rotate({})"><path d="M0 8V-14l1.8 4" stroke="#000" stroke-width=".35" fill="none"/></g>"##,
             num(angle.degrees())
-        ));
+        );
     }
     body.push_str("</g>");
     svg.raw(&body);

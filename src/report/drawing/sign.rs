@@ -51,7 +51,7 @@ impl Sign {
 pub(super) fn draw(svg: &mut Svg, sign: Sign, (x, y): (f64, f64), scale: f64) {
     let (mx, my) = (num(x), num(y));
     let body = match sign {
-        Sign::Feed => r##"<rect x="-2.8" y="-2.8" width="5.6" height="5.6"/>"##,
+        Sign::Feed => r#"<rect x="-2.8" y="-2.8" width="5.6" height="5.6"/>"#,
         Sign::Termination => {
             r##"<rect x="-2.8" y="-2.8" width="5.6" height="5.6" fill="#fff" stroke="#000" stroke-width=".35"/><path d="M-2.8 2.4h5.6" stroke="#000" stroke-width="1"/>"##
         }
@@ -65,7 +65,7 @@ pub(super) fn draw(svg: &mut Svg, sign: Sign, (x, y): (f64, f64), scale: f64) {
             r##"<path d="M-4 3.4v-5l4 -3l4 3v5z" fill="#fff" stroke="#000" stroke-width=".35"/>"##
         }
         Sign::Post => r##"<circle r="1" fill="#fff" stroke="#000" stroke-width=".35"/>"##,
-        Sign::Earth => r##"<path d="M-1.6 -1.5h3.2l-1.6 3z"/>"##,
+        Sign::Earth => r#"<path d="M-1.6 -1.5h3.2l-1.6 3z"/>"#,
     };
     svg.raw(&format!(r#"<g transform="translate({mx} {my}) scale({})">{body}</g>"#, num(scale)));
     let letter = match sign {

@@ -211,12 +211,13 @@ fn draw_beam(board: &mut Board, plan: &ArrayPlan, declination: Option<Angle>) {
     ));
     board.taken.rect(Rect::about(at, 9.0, 11.0));
     let words = match plan.feed.switch.states.len() {
-        0 | 1 => format!("listens {bearing} true"),
-        n => format!("first of {n}: {bearing} true"),
+        0 | 1 => "listens".to_owned(),
+        n => format!("first of {n}"),
     };
     let compass = declination
         .map(|angle| format!("{} compass", Bearing::from_degrees(bearing.degrees() - angle.degrees())));
-    let lines: Vec<&str> = std::iter::once(words.as_str()).chain(compass.as_deref()).collect();
+    let bearing = format!("{bearing} true");
+    let lines: Vec<&str> = [words.as_str(), &bearing].into_iter().chain(compass.as_deref()).collect();
     board.label(at, 11.0, Type::bold(3.9), &lines);
 }
 
@@ -231,7 +232,8 @@ fn draw_line_names(board: &mut Board, design: &Design, receiver_on_plan: bool) {
             if to.kind == PointKind::Receiver && !receiver_on_plan {
                 let away = format!("{} to RX: {:.2} m", line.label, from.site.distance_m(to.site));
                 let toward = format!("at {} true from {}", from.site.bearing_to(to.site), from.name);
-                board.label(b, 2.5, Type::bold(3.2), &[&away, &toward]);
+                let at = (a.0 + 0.7 * (b.0 - a.0), a.1 + 0.7 * (b.1 - a.1));
+                board.label(at, 2.5, Type::bold(3.2), &[&away, &toward]);
             } else if apart(a, b) >= 12.0 {
                 let middle = (f64::midpoint(a.0, b.0), f64::midpoint(a.1, b.1));
                 board.label(middle, 1.6, kind, &[&format!("{} {}", line.label, length.finished)]);

@@ -74,8 +74,8 @@ impl Type {
         self.size * 1.25
     }
 
-    /// How wide a text comes out in a wide font, in millimetres (0.62 and 0.72 of the size a letter, measured on DejaVu
-    /// Sans with a margin).
+    /// How wide a text comes out in a wide font, in millimetres (0.62 and 0.72 of the size a letter, measured on a wide
+    /// sans serif with a margin).
     #[expect(clippy::cast_precision_loss, reason = "texts are short")]
     pub(super) fn width(self, text: &str) -> f64 {
         let each = match self.bold {

@@ -207,14 +207,7 @@ fn cables(scene: &Scene<'_>) -> Block {
     if !delays.is_empty() {
         let words: Vec<String> = delays
             .iter()
-            .map(|piece| {
-                format!(
-                    "{} at {}, in the leg of the {}",
-                    piece.label,
-                    piece.from,
-                    show::or_dash(&piece.serves)
-                )
-            })
+            .map(|piece| format!("{} at {}, leg: {}", piece.label, piece.from, show::or_dash(&piece.serves)))
             .collect();
         let what = format!("Connect the delay lines: {}", words.join("; "));
         step(
@@ -236,7 +229,7 @@ fn element_readings(scene: &Scene<'_>) -> Vec<Reading> {
         let name = &element.name;
         match &element.kind {
             ElementKind::Wire(_) => {
-                let good = "resistor of the label plus both earths, ± 20 %";
+                let good = "termination resistor plus both earths, ± 20 %";
                 readings.push(Reading::new(
                     format!("{name}: wire lifted from the box, wire to earth, ohm"),
                     good,
