@@ -83,15 +83,30 @@ pub(super) struct Checked {
     pub(super) hash: String,
 }
 
-/// Reads and works out a project; errors anywhere end it.
+/// What a project is read for.
+#[derive(Clone, Copy, PartialEq, Eq)]
+enum Purpose {
+    /// To be built.
+    Build,
+    /// To be heard only: combiners that nobody builds are no obstacle.
+    Hear,
+}
+
+/// Reads and works out a project that is to be built; errors anywhere end it.
 pub(super) fn work(arguments: &ProjectArgs) -> Result<Work, Failure> {
-    let (checked, work) = read_and_work(arguments)?;
+    let (checked, work) = read_and_work(arguments, Purpose::Build)?;
+    work.ok_or(Failure::Problems(checked.problems))
+}
+
+/// Reads and works out a project of which only the pattern is asked.
+pub(super) fn work_to_hear(arguments: &ProjectArgs) -> Result<Work, Failure> {
+    let (checked, work) = read_and_work(arguments, Purpose::Hear)?;
     work.ok_or(Failure::Problems(checked.problems))
 }
 
 /// Reads a project and everything that can be checked of it.
 pub(super) fn check(arguments: &ProjectArgs) -> Result<Checked, Failure> {
-    let (mut checked, work) = read_and_work(arguments)?;
+    let (mut checked, work) = read_and_work(arguments, Purpose::Build)?;
     if let Some(work) = work {
         checked.problems = work.problems;
         checked.project = Some(work.project);
@@ -99,7 +114,7 @@ pub(super) fn check(arguments: &ProjectArgs) -> Result<Checked, Failure> {
     Ok(checked)
 }
 
-fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Failure> {
+fn read_and_work(arguments: &ProjectArgs, purpose: Purpose) -> Result<(Checked, Option<Work>), Failure> {
     let files = ProjectFiles::read(&arguments.file)?;
     let stock = files.stock.as_ref().map(|(name, text)| (name.as_str(), text.as_str()));
     let (project, mut problems) = project::read(&files.name, &files.text, stock);
@@ -115,6 +130,9 @@ fn read_and_work(arguments: &ProjectArgs) -> Result<(Checked, Option<Work>), Fai
     let catalogue = supply.catalogue;
     let settled = design::settle(&project, &catalogue);
     problems.extend(settled.problems);
+    if purpose == Purpose::Build {
+        problems.extend(design::check_hybrids(&settled.designs));
+    }
     let wanted = wanted_options(&project, arguments.option.as_deref())?;
     let mut results = Vec::new();
     checked.remarks = remarks(&project, &settled.designs);

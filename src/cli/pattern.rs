@@ -26,7 +26,7 @@ pub(super) struct Pattern {
 
 impl Pattern {
     pub(super) fn run(&self) -> Result<Outcome, Failure> {
-        let work = load::work(&self.project)?;
+        let work = load::work_to_hear(&self.project)?;
         output::problems(&work.problems);
         let weighting = if self.ideal { Weighting::Ideal } else { Weighting::Built };
         let designs: Vec<&Design> = work.results.iter().map(|result| &result.design).collect();

@@ -9,6 +9,7 @@ mod bay;
 mod delay;
 mod direction;
 mod earth;
+mod hybrid;
 mod land;
 mod settle;
 mod termination;
@@ -17,6 +18,7 @@ use rust_decimal::Decimal;
 
 pub use delay::{best_in_words, delay_curve};
 pub use earth::{EarthSize, earth_size, longest_radial, rod_length, set_ohms};
+pub use hybrid::check_hybrids;
 pub use settle::{Settled, code, settle};
 
 use crate::plan::{ArrayPlan, Cables, LineLength};

@@ -30,6 +30,8 @@ pub mod code {
         RADIALS_TOUCH = "radials-touch";
         /// An earth set above 150 ohm.
         POOR_EARTH = "poor-earth";
+        /// A number of legs that no equal tree of 2- and 3-way hybrids has.
+        ROW_NOT_BUILDABLE = "row-not-buildable";
         /// The trim allowance is smaller than the cable's own spread.
         TRIM_TIGHT = "trim-tight";
     }

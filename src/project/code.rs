@@ -91,8 +91,6 @@ crate::problem_codes! {
     STAGE_NEEDS_VERTICALS = "stage-needs-verticals";
     /// `delay` in a broadside row.
     BROADSIDE_DELAY = "broadside-delay";
-    /// A row that no tree of 2- and 3-way hybrids joins.
-    ROW_NOT_BUILDABLE = "row-not-buildable";
     /// Three in line with another scheme than crossfire.
     THREE_IN_LINE_SCHEME = "three-in-line-scheme";
     /// A delay ratio of zero or less.

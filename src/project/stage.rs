@@ -165,11 +165,9 @@ fn custom(table: &Table<'_>) -> Option<CustomSpec> {
 }
 
 fn check_positions(list: &Value<'_>, positions: &[ArrayPoint]) {
-    if positions.len() < 2 {
-        let message = format!("`positions` lists {}, but a stage has two elements or more", positions.len());
-        list.refuse::<()>(code::COUNT_OUT_OF_RANGE, message, "one element alone needs no stage");
-    } else {
-        check_buildable(list, positions.len());
+    if positions.is_empty() {
+        let message = "`positions` lists no place";
+        list.refuse::<()>(code::COUNT_OUT_OF_RANGE, message, "give one place an element");
     }
     for (n, position) in positions.iter().enumerate() {
         if let Some(first) = positions[..n].iter().position(|other| other == position) {
@@ -194,7 +192,6 @@ pub(super) fn broadside(array: &Table<'_>, bands: Option<Bands>) -> Option<Broad
     let table = array.take("broadside")?.table()?;
     let count = table.or("count", 2, "a pair", |v| v.count(COUNT)) as usize;
     if let Some(value) = table.take("count") {
-        check_buildable(&value, count);
         if count > 8 {
             let message = format!("{count} side by side: the row is long, and hard to keep equal");
             value.desk.warning(code::ROW_LONG, value.at, message, "usual: 2 to 8");
@@ -228,31 +225,4 @@ fn check_spacing(value: &Value<'_>, spacing: Length, bands: Bands) {
         let message = format!("{spacing} is {high:.2} wavelengths at {}: side lobes grow", bands.highest);
         value.desk.warning(code::SPACING_WIDE, value.at, message, "usual: up to about 0.9 wavelengths");
     }
-}
-
-/// Refuses a number of inputs that no equal tree of 2- and 3-way hybrids has.
-fn check_buildable(value: &Value<'_>, count: usize) {
-    if is_buildable(count) {
-        return;
-    }
-    let below = (1..count).rev().find(|n| is_buildable(*n)).unwrap_or(1);
-    let above = (count..=2 * count.max(1)).find(|n| is_buildable(*n)).unwrap_or(2);
-    let message = format!("{count} equal legs cannot be joined by 2- and 3-way hybrids");
-    value.refuse::<()>(
-        code::ROW_NOT_BUILDABLE,
-        message,
-        format!("the nearest numbers that can: {below} and {above}"),
-    );
-}
-
-fn is_buildable(mut count: usize) -> bool {
-    if count == 0 {
-        return false;
-    }
-    for factor in [2, 3] {
-        while count.is_multiple_of(factor) {
-            count /= factor;
-        }
-    }
-    count == 1
 }
