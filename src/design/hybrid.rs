@@ -22,7 +22,7 @@ pub fn check_hybrids(designs: &[Design]) -> Problems {
             let help = format!(
                 "the nearest numbers that can: {} and {} (`pattern` can be computed as it is)",
                 (1..legs).rev().find(|n| is_buildable(*n)).unwrap_or(1),
-                (legs + 1..).find(|n| is_buildable(*n)).unwrap_or(legs)
+                (legs + 1..=2 * legs).find(|n| is_buildable(*n)).unwrap_or(legs)
             );
             let place = place.or_else(|| places.endfire.clone());
             problems.push(Problem::error(code::ROW_NOT_BUILDABLE, place, message, help));

@@ -191,11 +191,11 @@ pub(super) fn broadside(array: &Table<'_>, bands: Option<Bands>) -> Option<Broad
     const COUNT: RangeInclusive<u32> = 2..=64;
     let table = array.take("broadside")?.table()?;
     let count = table.or("count", 2, "a pair", |v| v.count(COUNT)) as usize;
-    if let Some(value) = table.take("count") {
-        if count > 8 {
-            let message = format!("{count} side by side: the row is long, and hard to keep equal");
-            value.desk.warning(code::ROW_LONG, value.at, message, "usual: 2 to 8");
-        }
+    if let Some(value) = table.take("count")
+        && count > 8
+    {
+        let message = format!("{count} side by side: the row is long, and hard to keep equal");
+        value.desk.warning(code::ROW_LONG, value.at, message, "usual: 2 to 8");
     }
     let spacing = table.need("spacing", "spacing = \"400 ft\"", Value::positive_length);
     if let (Some(spacing), Some(bands), Some(value)) = (spacing, bands, table.take("spacing")) {
