@@ -8,7 +8,7 @@ use crate::problem::nearest;
 
 use super::model::{Part, Source, Unit};
 use super::number::{Grouping, NumberRule, Remark};
-use super::role::ROLES;
+use super::role::part_roles;
 use super::row::{Case, Least, RowReader, id_fault};
 use super::table::{Need, Schema};
 use super::{code, number};
@@ -107,10 +107,10 @@ pub(super) fn read(row: &mut RowReader<'_>, source: Source) -> Option<(Part, Cou
 
 fn role(row: &mut RowReader<'_>) -> String {
     let word = row.needed_word("role").to_lowercase();
-    if !word.is_empty() && !ROLES.contains(&word.as_str()) {
-        let help = match nearest(&word, ROLES.iter().copied()) {
+    if !word.is_empty() && !part_roles().any(|role| role == word) {
+        let help = match nearest(&word, part_roles()) {
             Some(near) => format!("did you mean `{near}`?"),
-            None => format!("the roles are {}", ROLES.join(", ")),
+            None => format!("the roles are {}", part_roles().collect::<Vec<_>>().join(", ")),
         };
         row.error("role", code::UNKNOWN_ROLE, &format!("is \"{word}\", which is no role"), help);
     }

@@ -1,11 +1,14 @@
 //! The roles that a catalogue part can play.
 
-/// Every role of `parts.csv`: the four that serve pieces cut to length, then the item roles.
-pub const ROLES: &[&str] = &[
-    "cable",
-    "wire",
-    "radial-wire",
-    "control-cable",
+/// The roles of parts that are cut to length.
+pub const CUT_ROLES: &[&str] = &["cable", "wire", "radial-wire", "control-cable"];
+
+/// The roles of pieces, each served by one of [`CUT_ROLES`].
+pub const PIECE_ROLES: &[&str] =
+    &["antenna-wire", "radial", "branch", "run", "delay", "main", "control", "bond-wire"];
+
+/// The roles of things that are counted.
+pub const ITEM_ROLES: &[&str] = &[
     "feed-box",
     "termination-box",
     "reflection-box",
@@ -56,6 +59,11 @@ pub const ROLES: &[&str] = &[
     "test-gear",
     "permit",
 ];
+
+/// Every role of `parts.csv`: those that serve pieces, then the item roles.
+pub fn part_roles() -> impl Iterator<Item = &'static str> {
+    CUT_ROLES.iter().chain(ITEM_ROLES).copied()
+}
 
 /// The role whose parts serve a piece of this role; an item role serves itself.
 ///

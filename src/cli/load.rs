@@ -13,8 +13,8 @@ use crate::design;
 use crate::pricing;
 use crate::problem::Problems;
 use crate::project::{self, Project};
-use crate::reception::{self, ArrayReport, Weighting};
-use crate::report::OptionResult;
+use crate::reception::{ArrayReport, Weighting};
+use crate::report::{self, OptionResult};
 use crate::takeoff;
 
 /// Everything worked out for a project.
@@ -43,10 +43,9 @@ impl Work {
 
     /// The pattern reports of each option's arrays, with the weights that the parts produce.
     pub(super) fn heard(&self) -> Vec<Vec<ArrayReport>> {
-        let frequencies = self.project.frequencies();
-        let of =
-            |array: &design::ArrayDesign| reception::report(&array.subject(Weighting::Built), &frequencies);
-        self.results.iter().map(|result| result.design.arrays.iter().map(of).collect()).collect()
+        let designs: Vec<&design::Design> = self.results.iter().map(|result| &result.design).collect();
+        let options = report::pattern::reports(&self.project, &designs, Weighting::Built);
+        options.into_iter().map(|(_, arrays)| arrays).collect()
     }
 
     /// What must be said beside any price.

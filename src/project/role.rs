@@ -2,68 +2,13 @@
 
 use super::code;
 use super::value::Value;
+use crate::catalogue::{ITEM_ROLES, PIECE_ROLES};
 use crate::problem::nearest;
 
 /// Every role of pieces, then of items.
-pub const ROLES: &[&str] = &[
-    "antenna-wire",
-    "radial",
-    "branch",
-    "run",
-    "delay",
-    "main",
-    "control",
-    "bond-wire",
-    "feed-box",
-    "termination-box",
-    "reflection-box",
-    "ground-rod",
-    "rod-clamp",
-    "surge-rod",
-    "end-support",
-    "mid-support",
-    "tree-support",
-    "backstay",
-    "end-insulator",
-    "mid-insulator",
-    "spreader",
-    "mast",
-    "base-mount",
-    "guy",
-    "guy-anchor",
-    "tensioner",
-    "loading-coil",
-    "top-wire",
-    "hub-box",
-    "hybrid-2way",
-    "hybrid-3way",
-    "inverter",
-    "pad",
-    "amplifier",
-    "bias-tee",
-    "power-supply",
-    "fuse",
-    "choke",
-    "relay-spdt",
-    "relay-dpdt",
-    "idle-terminator",
-    "decoder",
-    "control-box",
-    "enclosure",
-    "gland",
-    "plug",
-    "barrel",
-    "adaptor",
-    "surge-device",
-    "coax-arrester",
-    "control-arrester",
-    "conduit",
-    "marker",
-    "consumable",
-    "tool",
-    "test-gear",
-    "permit",
-];
+pub fn roles() -> impl Iterator<Item = &'static str> {
+    PIECE_ROLES.iter().chain(ITEM_ROLES).copied()
+}
 
 /// The roles whose long pieces may be joined.
 pub const JOINT_ROLES: &[&str] = &["main", "control", "antenna-wire"];
@@ -76,11 +21,11 @@ pub(super) fn read(value: &Value<'_>) -> Option<String> {
 
 /// Whether `role` is one; if not, writes it down at `value`.
 pub(super) fn check(value: &Value<'_>, role: &str) -> bool {
-    let known = ROLES.contains(&role);
+    let known = roles().any(|own| own == role);
     if !known {
-        let help = match nearest(role, ROLES.iter().copied()) {
+        let help = match nearest(role, roles()) {
             Some(near) => format!("did you mean `{near}`?"),
-            None => format!("roles are: {}", ROLES.join(", ")),
+            None => format!("roles are: {}", roles().collect::<Vec<_>>().join(", ")),
         };
         let message = format!("no item or piece has the role `{}`", role.escape_debug());
         value.desk.error(code::UNKNOWN_ROLE, Some(value.key_at), message, help);

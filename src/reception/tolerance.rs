@@ -6,9 +6,11 @@ use num_complex::Complex64;
 
 use super::element;
 use super::report::{Subject, seen_from, weights};
+use crate::catalogue::{Cable, VelocityData};
+use crate::physics::velocity::{FarEnd, VelocityPoints, test_frequency};
 use crate::plan::{CablePart, FeedTree, LineId, LineRole, Node, RoleId};
 use crate::radio::{self, Response};
-use crate::units::{Decibel, ElectricalLength, Frequency, Length, SPEED_OF_LIGHT_M_PER_S};
+use crate::units::{Decibel, ElectricalLength, Frequency, Length};
 
 /// Never printed above 0.5 % of the length, 0.2 % inside a match group (common practice, no source).
 const ALONE: f64 = 0.005;
@@ -112,29 +114,17 @@ pub enum TrimBasis {
     OneNumber,
 }
 
-/// Test frequencies of a line of electrical length `d` at the design frequency: c/(4d) open, c/(2d) shorted, each times
-/// VF(test)/VF(design), iterated once.
+/// Test frequencies of a line with this electrical length at the design frequency, by `physics::velocity`.
 pub fn trim(electrical: ElectricalLength, cable: &CablePart, design: Frequency) -> Option<Trim> {
-    let metres = electrical.metres();
-    if metres <= 0.0 {
-        return None;
-    }
-    let velocity = |frequency: Frequency| {
-        let data = cable.data.as_ref().and_then(|data| data.velocity_at(frequency));
-        data.unwrap_or(cable.velocity).value()
-    };
-    let ratio = |frequency: Frequency| velocity(frequency) / velocity(design);
-    let resonance = |first_mhz: f64| {
-        let once = first_mhz * ratio(Frequency::from_mhz(first_mhz));
-        Frequency::from_mhz(first_mhz * ratio(Frequency::from_mhz(once)))
-    };
-    let quarter_mhz = SPEED_OF_LIGHT_M_PER_S / 1e6 / (4.0 * metres);
-    let points = cable.data.as_ref().is_some_and(|data| {
-        matches!(&data.velocity_factor, crate::catalogue::VelocityData::Points(points) if points.len() > 1)
-    });
+    let listed = cable.data.as_ref().and_then(Cable::velocity);
+    let velocity = listed.unwrap_or_else(|| VelocityPoints::constant(cable.velocity));
+    let dip = |far_end| test_frequency(electrical, far_end, design, &velocity).map(|test| test.frequency);
+    let points = cable.data.as_ref().is_some_and(
+        |data| matches!(&data.velocity_factor, VelocityData::Points(points) if points.len() > 1),
+    );
     Some(Trim {
-        open: resonance(quarter_mhz),
-        shorted: resonance(2.0 * quarter_mhz),
+        open: dip(FarEnd::Open)?,
+        shorted: dip(FarEnd::Shorted)?,
         basis: if points { TrimBasis::Points } else { TrimBasis::OneNumber },
     })
 }
