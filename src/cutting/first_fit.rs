@@ -5,9 +5,10 @@ use crate::units::{Length, Money};
 
 /// Plans a job: on-hand lengths first (shortest first), then the offer whose total is least.
 ///
-/// Pieces of one group stay on one length. Every offer is tried alone; ties go to the first offer by id.
+/// Pieces of one group stay on one length where any length can hold them. Every offer is tried alone, then each reel is
+/// replaced by the cheapest one that still holds what is cut from it; ties go to the first offer.
 pub fn plan(job: &CutJob) -> CutPlan {
-    let items = items(job);
+    let (items, split_groups) = items(job);
     let mut on_hand: Vec<CutReel> = job.stock.iter().filter_map(on_hand_reel).collect();
     on_hand.sort_by_key(|reel| reel.length);
     let (reels, rest) = fill_on_hand(job, on_hand, items);
@@ -17,9 +18,9 @@ pub fn plan(job: &CutJob) -> CutPlan {
         .filter_map(|stock| buy_from(job, stock, &rest))
         .min_by(|a, b| a.rank().cmp(&b.rank()))
         .unwrap_or_else(|| Purchase { reels: Vec::new(), unplaced: rest.clone(), cost: None });
-    let mut plan = CutPlan::default();
+    let mut plan = CutPlan { split_groups, ..CutPlan::default() };
     plan.reels.extend(reels.into_iter().filter(|reel| !reel.cuts.is_empty()));
-    plan.reels.extend(bought.reels);
+    plan.reels.extend(bought.reels.into_iter().map(|reel| cheapest_that_holds(job, reel)));
     plan.unplaced = bought.unplaced.into_iter().flat_map(|item| item.pieces).collect();
     plan
 }
@@ -52,7 +53,8 @@ impl Purchase {
     }
 }
 
-fn items(job: &CutJob) -> Vec<Bundle> {
+/// The bundles longest first, and the groups that had to be split.
+fn items(job: &CutJob) -> (Vec<Bundle>, Vec<String>) {
     let mut bundles: Vec<Bundle> = Vec::new();
     for piece in &job.pieces {
         let same_group =
@@ -62,11 +64,52 @@ fn items(job: &CutJob) -> Vec<Bundle> {
             None => bundles.push(Bundle { pieces: vec![piece.clone()] }),
         }
     }
+    let loss = job.loss_per_cut;
+    let (whole, split): (Vec<Bundle>, Vec<Bundle>) =
+        bundles.into_iter().partition(|bundle| bundle.pieces.len() == 1 || fits_somewhere(job, bundle));
+    let names = split.iter().map(|bundle| bundle.pieces[0].group.clone()).collect();
+    let single =
+        split.into_iter().flat_map(|bundle| bundle.pieces).map(|piece| Bundle { pieces: vec![piece] });
+    let mut bundles: Vec<Bundle> = whole.into_iter().chain(single).collect();
     bundles.sort_by(|a, b| {
-        let longest_first = b.room(job.loss_per_cut).cmp(&a.room(job.loss_per_cut));
+        let longest_first = b.room(loss).cmp(&a.room(loss));
         longest_first.then_with(|| a.pieces[0].label.cmp(&b.pieces[0].label))
     });
-    bundles
+    (bundles, names)
+}
+
+fn fits_somewhere(job: &CutJob, bundle: &Bundle) -> bool {
+    let room = bundle.room(job.loss_per_cut) - job.loss_per_cut;
+    job.stock.iter().any(|stock| match stock {
+        StockLength::OnHand { length, .. } | StockLength::Reel { length, .. } => room <= *length,
+        StockLength::Metre { step, most_steps, .. } => {
+            most_steps.is_none_or(|most| u64::try_from(room.steps_of(*step)).is_ok_and(|steps| steps <= most))
+        }
+    })
+}
+
+/// The same cuts from the cheapest plain reel that is long enough; the reel itself when none is cheaper.
+fn cheapest_that_holds(job: &CutJob, reel: CutReel) -> CutReel {
+    let ReelSource::Bought(own) = &reel.source else { return reel };
+    let used = reel.cuts.last().map_or(Length::ZERO, |cut| cut.to);
+    let price_of = |stock: &StockLength| match stock {
+        StockLength::Reel { offer, length, price: Some(price), available: None, least: 1 } => {
+            Some((*price, offer.clone(), *length))
+        }
+        StockLength::Reel { .. } | StockLength::OnHand { .. } | StockLength::Metre { .. } => None,
+    };
+    let Some((own_price, ..)) = job.stock.iter().filter_map(price_of).find(|(_, offer, _)| offer == own)
+    else {
+        return reel;
+    };
+    let long_enough = job.stock.iter().filter_map(price_of).filter(|(_, _, length)| *length >= used);
+    match long_enough.min() {
+        Some((price, offer, length)) if price < own_price => {
+            let left = (length - used - job.loss_per_cut).max(Length::ZERO);
+            CutReel { source: ReelSource::Bought(offer), length, cuts: reel.cuts, left }
+        }
+        Some(_) | None => reel,
+    }
 }
 
 fn on_hand_reel(stock: &StockLength) -> Option<CutReel> {
@@ -230,6 +273,22 @@ mod tests {
         let plan = plan(&job(&pieces, vec![reel(100_000), reel(130_000)]));
         let with_d = plan.reels.iter().find(|reel| reel.cuts.iter().any(|cut| cut.label == "D1")).unwrap();
         assert!(with_d.cuts.iter().any(|cut| cut.label == "D2"));
+    }
+
+    #[test]
+    fn a_group_that_no_length_can_hold_is_split_and_named() {
+        let pieces = [("B1", 99_200, "A"), ("B2", 99_200, "A"), ("B3", 99_200, "A"), ("B4", 99_200, "A")];
+        let plan = plan(&job(&pieces, vec![reel(305_000)]));
+        assert!(plan.unplaced.is_empty());
+        assert_eq!(plan.reels.len(), 2);
+        assert_eq!(plan.split_groups, ["A"]);
+    }
+
+    #[test]
+    fn a_short_rest_comes_from_a_short_reel() {
+        let plan = plan(&job(&[("A", 290_000, ""), ("B", 40_000, "")], vec![reel(305_000), reel(50_000)]));
+        let lengths: Vec<Length> = plan.reels.iter().map(|reel| reel.length).collect();
+        assert_eq!(lengths, [Length::from_mm(305_000), Length::from_mm(50_000)]);
     }
 
     #[test]

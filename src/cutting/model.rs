@@ -73,6 +73,8 @@ pub struct CutPlan {
     pub reels: Vec<CutReel>,
     /// Pieces that fit nothing.
     pub unplaced: Vec<CutPiece>,
+    /// Groups that no single length can hold, so that their pieces come from several.
+    pub split_groups: Vec<String>,
 }
 
 /// One length that is cut.

@@ -34,6 +34,12 @@ pub(super) fn buy_lengths(bill: &mut Bill, market: &Market<'_>, need: &Lengths, 
         problems.push(too_long(part, &plan, &offers));
     }
     add_lines(bill, market, need, part, &offers, &plan, total);
+    for group in &plan.split_groups {
+        bill.hints.push(format!(
+            "group {group} of `{}` does not fit on one length: its pieces come from several, so compare them with each other before use",
+            part.id
+        ));
+    }
     hint_cheaper(bill, market, part);
     bill.cut_plans.push(PartCutPlan { part: part.id.clone(), description: part.description.clone(), plan });
 }
