@@ -1,6 +1,6 @@
 //! The reversal check, in words.
 
-use super::settle::code;
+use super::code;
 use crate::arrays::selfcheck::{Verdict, judge};
 use crate::arrays::{self, Directive, Stage};
 use crate::plan::Polarity;

@@ -1,7 +1,7 @@
 //! Whether the combining trees can be built from 2- and 3-way hybrids.
 
 use super::Design;
-use super::settle::code;
+use super::code;
 use crate::plan::Node;
 use crate::problem::{Problem, Problems};
 

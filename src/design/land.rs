@@ -1,6 +1,6 @@
 //! What the land says to a layout: paths under wires, keep-out areas, radials that would touch.
 
-use super::settle::code;
+use super::code;
 use crate::plan::{ArrayPlan, Fixture, PointKind, SitePosition, Span};
 use crate::problem::{Problem, Problems};
 use crate::project::{ArraySpec, Crossing, CrossingKind, KeepOut, Project};

@@ -6,6 +6,7 @@
 mod amplifier;
 mod balance;
 mod bay;
+pub mod code;
 mod delay;
 mod direction;
 mod earth;
@@ -19,7 +20,7 @@ use rust_decimal::Decimal;
 pub use delay::{best_in_words, delay_curve};
 pub use earth::{EarthSize, earth_size, longest_radial, rod_length, set_ohms};
 pub use hybrid::check_hybrids;
-pub use settle::{Settled, code, settle};
+pub use settle::{Settled, settle};
 
 use crate::plan::{ArrayPlan, Cables, LineLength};
 use crate::project::ArraySpec;

@@ -1,7 +1,7 @@
 //! The resistor at the far end of a wire.
 
+use super::code;
 use super::earth::{earth_size, set_ohms};
-use super::settle::code;
 use crate::catalogue::Catalogue;
 use crate::physics::preferred::nearest_e24;
 use crate::plan::{EarthSet, EarthUse, ElementKind, Layout};
