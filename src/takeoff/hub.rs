@@ -56,7 +56,8 @@ fn count_node(tally: &mut Tally<'_>, array: &ArrayDesign, node: &Node, z0: &str)
         }
         Node::Amplifier { hub, .. } => {
             let want = Want::any().with("element", "hub");
-            tally.add("amplifier", &want, &name(hub), 1, "between the last combiner and the main line");
+            let why = format!("between the last combiner and the main line: {}", array.amplifier_reason);
+            tally.add("amplifier", &want, &name(hub), 1, &why);
         }
         Node::Combine { hub, inputs } => {
             let role = format!("hybrid-{}way", inputs.len());

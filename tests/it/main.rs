@@ -4,6 +4,7 @@
 
 mod architecture;
 mod commands;
+mod exactness;
 mod laws;
 mod money;
 mod problems;
