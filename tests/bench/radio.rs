@@ -7,6 +7,7 @@ use arraywright::radio::{
 use arraywright::units::{Diameter, Frequency, Length};
 use divan::{Bencher, black_box};
 use num_complex::Complex64;
+use rayon::prelude::*;
 
 fn main() {
     divan::main();
@@ -80,6 +81,31 @@ fn rdf_with_new_matrix(bencher: Bencher<'_, '_>, layout: Layout) {
         let quotient =
             Quotient::build(black_box(&elements), Soil::AVERAGE, frequency(), 20.0).expect("a legal array");
         quotient.rdf_db(&weights)
+    });
+}
+
+/// RDF evaluations on every core: 65 536 weight vectors against one matrix.
+#[divan::bench(args = ALL, sample_count = 20, counters = [divan::counter::ItemsCount::new(65_536_u32)])]
+fn rdf_with_matrix_on_every_core(bencher: Bencher<'_, '_>, layout: Layout) {
+    let quotient = response(layout).quotient(20.0);
+    let many: Vec<Vec<Complex64>> =
+        (0..65_536).map(|i| weights(layout, 0.4 + f64::from(i) / 120_000.0)).collect();
+    bencher.bench_local(|| {
+        let rdf = many.par_iter().map(|weights| quotient.rdf_db(black_box(weights)));
+        rdf.reduce(|| f64::NEG_INFINITY, f64::max)
+    });
+}
+
+/// 256 RDF evaluations on every core, each with its matrix built afresh.
+#[divan::bench(args = ALL, sample_count = 20, counters = [divan::counter::ItemsCount::new(256_u32)])]
+fn rdf_with_new_matrix_on_every_core(bencher: Bencher<'_, '_>, layout: Layout) {
+    let (elements, weights) = (elements(layout), weights(layout, 0.94));
+    bencher.bench_local(|| {
+        let one = |_| {
+            let quotient = Quotient::build(black_box(&elements), Soil::AVERAGE, frequency(), 20.0);
+            quotient.expect("a legal array").rdf_db(&weights)
+        };
+        (0..256).into_par_iter().map(one).reduce(|| f64::NEG_INFINITY, f64::max)
     });
 }
 
