@@ -110,6 +110,16 @@ impl Problem {
         Self { code, severity: Severity::Error, place, message: message.into(), help: help.into() }
     }
 
+    /// Something that the reader should know.
+    pub fn note(
+        code: Code,
+        place: Option<Place>,
+        message: impl Into<String>,
+        help: impl Into<String>,
+    ) -> Self {
+        Self { code, severity: Severity::Note, place, message: message.into(), help: help.into() }
+    }
+
     /// A warning.
     pub fn warning(
         code: Code,

@@ -19,6 +19,8 @@ crate::problem_codes! {
     POOR_EARTH = "poor-earth";
     /// A number of legs that no equal tree of 2- and 3-way hybrids has.
     ROW_NOT_BUILDABLE = "row-not-buildable";
+    /// A key that is read, but that nothing uses in this version.
+    NOT_USED_YET = "not-used-yet";
     /// The trim allowance is smaller than the cable's own spread.
     TRIM_TIGHT = "trim-tight";
 }

@@ -14,6 +14,7 @@ mod hybrid;
 mod land;
 mod settle;
 mod termination;
+mod unused;
 
 use rust_decimal::Decimal;
 

@@ -3,7 +3,9 @@
 use rust_decimal::Decimal;
 use rust_decimal::prelude::ToPrimitive;
 
-use super::{ArrayDesign, Design, amplifier, balance, bay, code, delay, direction, land, termination};
+use super::{
+    ArrayDesign, Design, amplifier, balance, bay, code, delay, direction, land, termination, unused,
+};
 use crate::arrays::{self, Context, HubAmplifier, LineCost, Names};
 use crate::catalogue::Catalogue;
 use crate::plan::{Allowances, Cables, LineRole, choose_cables, measure};
@@ -29,7 +31,7 @@ struct Bench<'a> {
 
 /// Settles every option of a project.
 pub fn settle(project: &Project, catalogue: &Catalogue) -> Settled {
-    let mut problems = Problems::default();
+    let mut problems = unused::notes(project);
     let mut designs = Vec::new();
     let route_factor = route_factor_on(project, catalogue).unwrap_or_else(|| {
         problems.push(no_terrain_row(project.site.terrain));
