@@ -16,6 +16,8 @@ pub mod code {
         WRONG_PART_ROLE = "wrong-part-role";
         /// A cable without velocity factor.
         NO_VELOCITY_FACTOR = "no-velocity-factor";
+        /// Cables of different impedance in one array.
+        MIXED_IMPEDANCE = "mixed-impedance";
     }
 }
 
@@ -77,7 +79,29 @@ pub fn choose(spec: &ArraySpec, catalogue: &Catalogue, design: Frequency, proble
         || PartChoice::Missing("control-cable".to_owned()),
         |part| PartChoice::Part(part.id.clone()),
     );
-    Cables { branch, run, delay, main, control }
+    let cables = Cables { branch, run, delay, main, control };
+    check_impedance(spec, &cables, problems);
+    cables
+}
+
+/// A line delays by its length only when it is matched: all lines of an array want one impedance.
+fn check_impedance(spec: &ArraySpec, cables: &Cables, problems: &mut Problems) {
+    let named =
+        [("branch", &cables.branch), ("run", &cables.run), ("delay", &cables.delay), ("main", &cables.main)];
+    let z0 = |cable: &CablePart| cable.data.as_ref().and_then(|data| data.z0_ohm);
+    let known: Vec<_> =
+        named.iter().filter_map(|(key, cable)| z0(cable).map(|z0| (*key, cable, z0))).collect();
+    let Some((_, _, first)) = known.first() else { return };
+    if known.iter().all(|(.., z0)| z0 == first) {
+        return;
+    }
+    let words =
+        known.iter().map(|(key, cable, z0)| format!("{key} `{}` {} ohm", cable.part.id(), z0.normalize()));
+    let words = words.collect::<Vec<_>>().join(", ");
+    let place = spec.places.feed.values().next().cloned().or_else(|| spec.places.name.clone());
+    let message = format!("the lines of {} differ in impedance: {words}", spec.name);
+    let help = "name cables of one impedance in [array.feed]: boxes, pads and delays are made for one";
+    problems.push(Problem::warning(code::MIXED_IMPEDANCE, place, message, help));
 }
 
 fn part_for<'a>(
