@@ -8,7 +8,7 @@ use super::{
 };
 use crate::arrays::{self, Context, HubAmplifier, LineCost, Names};
 use crate::catalogue::Catalogue;
-use crate::plan::{Allowances, Cables, LineRole, choose_cables, measure};
+use crate::plan::{Allowances, Cables, LineRole, check_impedance, choose_cables, measure};
 use crate::problem::{Problem, Problems};
 use crate::project::{ArraySpec, Combining, Project, Terrain};
 use crate::reception::{self, Weighting};
@@ -111,6 +111,7 @@ fn settle_array(
     let mut design = draw(&context, names, cables);
     design.amplifier_reason = amplifier_reason;
     make_exact(project, &mut design);
+    check_impedance(spec, &design.cables, &design.plan.feed, problems);
     land::check(project, spec, &design.plan, problems);
     trim_spread(bench, &design, problems);
     design

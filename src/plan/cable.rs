@@ -1,11 +1,13 @@
 //! Which part serves which line.
 
+use std::collections::BTreeSet;
+
 use crate::catalogue::{Cable, Catalogue, Part, PartChoice, VelocityData};
 use crate::problem::{Problem, Problems};
 use crate::project::{ArraySpec, FeedSpec};
 use crate::units::{Frequency, VelocityFactor};
 
-use super::feed::LineRole;
+use super::feed::{FeedTree, LineRole};
 
 /// Codes of problems found while choosing cables.
 pub mod code {
@@ -79,24 +81,21 @@ pub fn choose(spec: &ArraySpec, catalogue: &Catalogue, design: Frequency, proble
         || PartChoice::Missing("control-cable".to_owned()),
         |part| PartChoice::Part(part.id.clone()),
     );
-    let cables = Cables { branch, run, delay, main, control };
-    check_impedance(spec, &cables, problems);
-    cables
+    Cables { branch, run, delay, main, control }
 }
 
-/// A line delays by its length only when it is matched: all lines of an array want one impedance.
-fn check_impedance(spec: &ArraySpec, cables: &Cables, problems: &mut Problems) {
-    let named =
-        [("branch", &cables.branch), ("run", &cables.run), ("delay", &cables.delay), ("main", &cables.main)];
-    let z0 = |cable: &CablePart| cable.data.as_ref().and_then(|data| data.z0_ohm);
-    let known: Vec<_> =
-        named.iter().filter_map(|(key, cable)| z0(cable).map(|z0| (*key, cable, z0))).collect();
-    let Some((_, _, first)) = known.first() else { return };
-    if known.iter().all(|(.., z0)| z0 == first) {
+/// A line delays by its length only when it is matched: all lines that an array has want one impedance.
+pub fn check_impedance(spec: &ArraySpec, cables: &Cables, feed: &FeedTree, problems: &mut Problems) {
+    let used: BTreeSet<LineRole> = feed.lines.iter().map(|line| line.role).collect();
+    let z0 = |role: &LineRole| cables.of(*role).data.as_ref().and_then(|data| data.z0_ohm);
+    let known: Vec<_> = used.iter().filter_map(|role| z0(role).map(|z0| (*role, z0))).collect();
+    let Some((_, first)) = known.first() else { return };
+    if known.iter().all(|(_, z0)| z0 == first) {
         return;
     }
-    let words =
-        known.iter().map(|(key, cable, z0)| format!("{key} `{}` {} ohm", cable.part.id(), z0.normalize()));
+    let words = known
+        .iter()
+        .map(|(role, z0)| format!("{} `{}` {} ohm", role.word(), cables.of(*role).part.id(), z0.normalize()));
     let words = words.collect::<Vec<_>>().join(", ");
     let place = spec.places.feed.values().next().cloned().or_else(|| spec.places.name.clone());
     let message = format!("the lines of {} differ in impedance: {words}", spec.name);

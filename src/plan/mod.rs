@@ -7,7 +7,7 @@ pub mod layout;
 pub mod measure;
 pub mod weight;
 
-pub use cable::{CablePart, Cables, choose as choose_cables};
+pub use cable::{CablePart, Cables, check_impedance, choose as choose_cables};
 pub use feed::{
     Connection, FeedTree, Hub, HubId, Leg, Line, LineId, LineRole, Node, RoleId, State, Switch, Termini,
 };
