@@ -96,19 +96,30 @@ pub fn rows(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayRepor
     rows
 }
 
-/// The figures of an option's first array in its first direction at one frequency.
-fn figures(reports: &[ArrayReport], frequency: Frequency) -> Option<&Figures> {
-    let direction = reports.first()?.directions.first()?;
+/// The array that an option is judged by: its first own one, for an array of every option tells none apart; else its first.
+fn judged(result: &OptionResult) -> usize {
+    result.design.arrays.iter().position(|array| array.spec.option.is_some()).unwrap_or_default()
+}
+
+/// The figures of the array that an option is judged by, in its first direction at one frequency.
+fn figures<'a>(
+    result: &OptionResult,
+    reports: &'a [ArrayReport],
+    frequency: Frequency,
+) -> Option<&'a Figures> {
+    let direction = reports.get(judged(result))?.directions.first()?;
     direction.frequencies.iter().find(|report| report.frequency == frequency)?.figures.as_ref().ok()
 }
 
-/// Directivity, rear, beamwidth and signal of each option's first array, and what a dB costs above the cheapest.
+/// Directivity, rear, beamwidth and signal of the array that each option is judged by, and what a dB costs above the cheapest.
 fn radio_rows(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayReport>]) -> Vec<Row> {
     let mut rows = Vec::new();
     for frequency in project.frequencies() {
         let mut row = |name: &str, unit: &str, value: &dyn Fn(&Figures) -> Cell| {
-            let cell = |reports: &Vec<ArrayReport>| figures(reports, frequency).map_or(Cell::None, value);
-            let values = heard.iter().map(cell).collect();
+            let cell = |(result, reports): (&OptionResult, &Vec<ArrayReport>)| {
+                figures(result, reports, frequency).map_or(Cell::None, value)
+            };
+            let values = results.iter().zip(heard).map(cell).collect();
             rows.push(Row { name: format!("{name} at {frequency}"), unit: unit.to_owned(), values });
         };
         row("RDF at its peak", "dB", &|f| tenth(f.report.directivity.rdf_db));
@@ -140,7 +151,10 @@ fn tenth(value: f64) -> Cell {
 
 /// Money for each dB of RDF above the cheapest option; nothing where an option hears no better.
 fn cost_per_decibel(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayReport>]) -> Row {
-    let rdf = |n: usize| figures(&heard[n], project.frequency).map(|f| tenths(f.report.directivity.rdf_db));
+    let rdf = |n: usize| {
+        let figures = figures(&results[n], &heard[n], project.frequency)?;
+        Some(tenths(figures.report.directivity.rdf_db))
+    };
     let cheapest = (0..results.len()).min_by_key(|n| results[*n].bill.total);
     let value = |n: usize| {
         let base = cheapest?;
@@ -244,9 +258,15 @@ pub fn sheet(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayRepo
     }
     sheet.tables.push(table);
     if results.iter().any(|result| result.design.arrays.len() > 1) {
-        sheet
-            .notes
-            .push("an option with several arrays is judged by its first; `pattern` has them all".to_owned());
+        let by: Vec<String> = results
+            .iter()
+            .filter_map(|result| Some((result.name(), result.design.arrays.get(judged(result))?)))
+            .map(|(option, array)| format!("{option} by {}", array.plan.name))
+            .collect();
+        sheet.notes.push(format!(
+            "of several arrays one is judged, the first that is the option's own: {}; `pattern` has them all",
+            by.join(", ")
+        ));
     }
     sheet.notes.push(
         "RDF takes noise as equal from all sky directions; a front to back above 25 dB is beyond any model of real ground"
@@ -315,7 +335,7 @@ fn heard_in_words(
 ) -> Option<String> {
     let of = |wanted: &OptionResult| {
         let index = results.iter().position(|result| std::ptr::eq(result, wanted))?;
-        figures(&heard[index], project.frequency)
+        figures(wanted, &heard[index], project.frequency)
     };
     let (a, b) = (&of(first)?.report, &of(second)?.report);
     let sharper = tenths(a.directivity.rdf_db - b.directivity.rdf_db);

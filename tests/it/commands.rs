@@ -255,3 +255,53 @@ element.wire = { length = "176 m" }
     assert!(stderr.contains("offers.csv:3:"), "{stderr}");
     assert!(ran.stdout().is_empty());
 }
+
+/// An array of every option tells none apart: `compare` looks at the first one that is the option's own.
+#[test]
+fn options_are_compared_by_their_own_arrays() {
+    let test = ProjectTest::new(
+        r#"
+[project]
+title = "Shared"
+currency = "EUR"
+estimated = 2026-06-01
+frequency = "1.83 MHz"
+
+[site]
+receiver = { east = "-140 m", north = "-60 m" }
+
+[[array]]
+name = "both"
+heading = "130 deg"
+centre = { east = "-300 m", north = "0 m" }
+element.wire = { length = "160 m" }
+
+[[array]]
+name = "wire"
+option = "one"
+heading = "310 deg"
+element.wire = { length = "176 m" }
+
+[[array]]
+name = "pair"
+option = "two"
+heading = "310 deg"
+element.vertical = { height = "6 m" }
+endfire = { spacing = "18.3 m" }
+"#,
+    );
+    let heard = |option: &str, array: usize| {
+        let json = test.run(&["pattern", "--option", option, "--format", "json"]).exits(0).json();
+        json["options"][0]["arrays"][array]["directions"][0]["frequencies"][0]["rdf_db"].as_f64().unwrap()
+    };
+    let json = test.run(&["compare", "--format", "json"]).exits(0).json();
+    let rows = json["rows"].as_array().unwrap();
+    let shown = rows.iter().find(|row| row["name"] == "RDF at its peak at 1.83 MHz").unwrap();
+    for (n, option) in ["one", "two"].into_iter().enumerate() {
+        let (shown, own) = (shown["values"][n].as_f64().unwrap(), heard(option, 1));
+        assert!((shown - own).abs() <= 0.051, "{option}: {shown} shown, {own} of its own array");
+        assert!((shown - heard(option, 0)).abs() > 0.051, "{option} is judged by the shared array");
+    }
+    let text = test.run(&["compare"]).exits(0).stdout();
+    assert!(text.contains("one by wire, two by pair"), "{text}");
+}
