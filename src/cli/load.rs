@@ -126,13 +126,15 @@ fn read_and_work(arguments: &ProjectArgs, purpose: Purpose) -> Result<(Checked, 
     if checked.problems.has_errors() {
         return Ok((checked, None));
     }
+    let wanted = wanted_options(&project, arguments.option.as_deref())?;
+    let project = arguments.option.as_deref().map_or_else(|| project.clone(), |option| project.only(option));
+    checked.project = Some(project.clone());
     let catalogue = supply.catalogue;
     let settled = design::settle(&project, &catalogue);
     problems.extend(settled.problems);
     if purpose == Purpose::Build {
         problems.extend(design::check_hybrids(&settled.designs));
     }
-    let wanted = wanted_options(&project, arguments.option.as_deref())?;
     let mut results = Vec::new();
     checked.remarks = remarks(&project, &settled.designs);
     for design in settled.designs.into_iter().filter(|design| wanted.contains(&design.option)) {

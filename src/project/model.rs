@@ -70,6 +70,26 @@ impl Project {
         self.arrays.iter().filter(|a| a.option.as_deref().is_none_or(|name| name == option)).collect()
     }
 
+    /// This project with the arrays of one option only, and the assumptions that belong to them.
+    #[must_use]
+    pub fn only(&self, option: &str) -> Self {
+        let arrays: Vec<ArraySpec> = self.arrays_of(option).into_iter().cloned().collect();
+        let mut assumptions = self.assumptions.clone();
+        assumptions.retain(|assumption| {
+            let array = self.array_behind(&assumption.key);
+            array.is_none_or(|array| arrays.iter().any(|kept| kept.name == array.name))
+        });
+        Self { arrays, assumptions, ..self.clone() }
+    }
+
+    /// The array that the key of an assumption speaks of, such as `array.north.feed.hub`; none for keys of the project.
+    pub fn array_behind(&self, key: &str) -> Option<&ArraySpec> {
+        let rest = key.strip_prefix("array.")?;
+        let of = |name: &str| rest.strip_prefix(name).is_some_and(|rest| rest.starts_with('.'));
+        // Names may hold full stops, so the longest that fits is the one meant.
+        self.arrays.iter().filter(|array| of(&array.name)).max_by_key(|array| array.name.len())
+    }
+
     /// Every band of the project, the design frequency first.
     pub fn frequencies(&self) -> Vec<Frequency> {
         std::iter::once(self.frequency).chain(self.also.iter().copied()).collect()

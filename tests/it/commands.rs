@@ -305,3 +305,12 @@ endfire = { spacing = "18.3 m" }
     let text = test.run(&["compare"]).exits(0).stdout();
     assert!(text.contains("one by wire, two by pair"), "{text}");
 }
+
+#[test]
+fn one_option_alone_says_nothing_of_the_others() {
+    let project = repository("demo-projects/two-ways-north-west");
+    let ran = run(&["check", project.to_str().unwrap(), "--option", "broadside"]).exits(0);
+    assert!(ran.stdout().contains("nw-broadside"), "{}", ran.stdout());
+    assert!(!ran.stdout().contains("nw-echelon"), "{}", ran.stdout());
+    assert!(!ran.stderr().contains("nw-echelon"), "{}", ran.stderr());
+}

@@ -86,12 +86,8 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
 
 /// Whether an assumption concerns this option: one of an array of another option does not.
 fn belongs(input: &Input<'_>, option: &OptionInput<'_>, key: &str) -> bool {
-    let Some(rest) = key.strip_prefix("array.") else { return true };
-    let of = |name: &str| rest.strip_prefix(name).is_some_and(|rest| rest.starts_with('.'));
-    let names = input.project.arrays.iter().map(|array| array.name.as_str()).filter(|name| of(name));
-    // Names may hold full stops, so the longest that fits is the one meant.
-    let meant = names.max_by_key(|name| name.len());
-    meant.is_none_or(|name| option.design.arrays.iter().any(|array| array.spec.name == name))
+    let meant = input.project.array_behind(key);
+    meant.is_none_or(|meant| option.design.arrays.iter().any(|array| array.spec.name == meant.name))
 }
 
 fn lines(option: &OptionInput<'_>, currency: &Currency) -> Vec<Row> {
