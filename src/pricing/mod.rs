@@ -8,6 +8,8 @@ mod offer;
 
 pub use model::*;
 
+use std::collections::BTreeSet;
+
 use crate::catalogue::Catalogue;
 use crate::problem::{Problem, Problems};
 use crate::project::Project;
@@ -23,6 +25,8 @@ pub mod code {
         UNKNOWN_ON_HAND = "unknown-on-hand";
         /// An existing thing names a label or role that this project does not need.
         UNKNOWN_EXISTING = "unknown-existing";
+        /// Freight is given for a supplier or ship group that no offer has.
+        UNKNOWN_FREIGHT = "unknown-freight";
         /// A piece is longer than anything it could be cut from.
         PIECE_TOO_LONG = "piece-too-long";
     }
@@ -35,6 +39,7 @@ pub fn price(project: &Project, catalogue: &Catalogue, takeoff: &Takeoff) -> (Bi
     let mut problems = Problems::default();
     let demand = demand::gather(project, catalogue, takeoff);
     check_stock(project, catalogue, takeoff, &mut problems);
+    check_freight(project, catalogue, &mut problems);
     let market = offer::Market::new(project, catalogue);
     let mut bill = Bill::default();
     for need in &demand {
@@ -47,6 +52,25 @@ pub fn price(project: &Project, catalogue: &Catalogue, takeoff: &Takeoff) -> (Bi
     bill.materials = amounts.sum::<Money>().rounded(&project.currency);
     charge::add(&mut bill, project);
     (bill, problems)
+}
+
+/// A charge that nothing can fall under is a slip of the pen, and would be left out of the total in silence.
+fn check_freight(project: &Project, catalogue: &Catalogue, problems: &mut Problems) {
+    let offers = || catalogue.offers.values();
+    let known: BTreeSet<&str> = offers()
+        .flat_map(|offer| [offer.supplier.as_str(), offer.ship_group.as_str()])
+        .filter(|name| !name.is_empty())
+        .collect();
+    for key in project.prices.freight.keys().filter(|key| !known.contains(key.as_str())) {
+        let listed = known.iter().copied().collect::<Vec<_>>().join(", ");
+        let help = match crate::problem::nearest(key, known.iter().copied()) {
+            Some(near) => format!("did you mean `{near}`? the catalogue has: {listed}"),
+            None => format!("the catalogue has: {listed}"),
+        };
+        let message =
+            format!("freight: no offer has the supplier or ship group `{key}`, so nothing is charged for it");
+        problems.push(Problem::warning(code::UNKNOWN_FREIGHT, None, message, help));
+    }
 }
 
 /// What the owner has or what stands already must be something that exists.

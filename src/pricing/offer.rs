@@ -82,9 +82,14 @@ impl<'a> Market<'a> {
                 offer.id, offer.currency
             );
             let help = format!(
-                "give [prices] exchange = [{{ from = \"{}\", rate = \"…\", on = {} }}], or price it in {own}",
+                "give [prices] exchange = [{{ from = \"{0}\", rate = \"…\", on = {1} }}], which serves every offer in {0}, or price them in {own}",
                 offer.currency, self.project.estimated
             );
+            // One missing rate is one mistake, however many offers it concerns.
+            let said = problems.sorted().iter().any(|p| p.code == code::MIXED_CURRENCY && p.help == help);
+            if said {
+                return None;
+            }
             problems.push(Problem::error(code::MIXED_CURRENCY, Some(offer.place.clone()), message, help));
         }
         rate.map(|exchange| price.times(exchange.rate))

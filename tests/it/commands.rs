@@ -314,3 +314,10 @@ fn one_option_alone_says_nothing_of_the_others() {
     assert!(!ran.stdout().contains("nw-echelon"), "{}", ran.stdout());
     assert!(!ran.stderr().contains("nw-echelon"), "{}", ran.stderr());
 }
+
+#[test]
+fn one_missing_rate_is_said_once() {
+    let text = run(&["start", "single-wire"]).exits(0).stdout().replace("\"EUR\"", "\"USD\"");
+    let ran = ProjectTest::new(&text).run(&["estimate"]).exits(1);
+    assert_eq!(ran.stderr().matches("mixed-currency").count(), 1, "{}", ran.stderr());
+}
