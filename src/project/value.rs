@@ -152,6 +152,7 @@ impl<'a> Value<'a> {
         };
         let digits = bare.bytes().any(|b| b.is_ascii_digit());
         let bare = if digits { bare } else { "1" };
+        let bare = if unit == "%" { in_percent(bare) } else { bare.to_owned() };
         let message = format!("`{}` is a dimension and needs its unit, in quotes", self.name());
         self.refuse(code::BARE_NUMBER, message, self.right(&format!("\"{bare} {unit}\"")))
     }
@@ -352,4 +353,10 @@ fn kind(value: &DeValue<'_>) -> &'static str {
         DeValue::Array(_) => "a list",
         DeValue::Table(_) => "a table",
     }
+}
+
+/// A bare share such as 0.21 is meant as 21 %; other numbers stand as they are.
+fn in_percent(bare: &str) -> String {
+    let share = bare.parse::<Decimal>().ok().filter(|n| *n > Decimal::ZERO && *n < Decimal::ONE);
+    share.map_or_else(|| bare.to_owned(), |share| (share * Decimal::ONE_HUNDRED).normalize().to_string())
 }

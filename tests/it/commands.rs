@@ -321,3 +321,10 @@ fn one_missing_rate_is_said_once() {
     let ran = ProjectTest::new(&text).run(&["estimate"]).exits(1);
     assert_eq!(ran.stderr().matches("mixed-currency").count(), 1, "{}", ran.stderr());
 }
+
+#[test]
+fn the_cure_of_a_bare_share_is_the_same_share_in_percent() {
+    let text = run(&["start", "single-wire"]).exits(0).stdout() + "\n[prices]\ntax = 0.21\n";
+    let ran = ProjectTest::new(&text).run(&["check"]).exits(1);
+    assert!(ran.stderr().contains("write tax = \"21 %\""), "{}", ran.stderr());
+}
