@@ -22,14 +22,17 @@ pub fn sheet(results: &[OptionResult]) -> Sheet {
 
 fn answer(result: &OptionResult) -> String {
     let elements = result.design.arrays.iter().map(|array| array.plan.layout.elements.len()).sum::<usize>();
+    let plural = |n: usize| if n == 1 { "" } else { "s" };
+    let wire = cut_of(result, PieceRole::AntennaWire);
+    let wire = if wire == Length::ZERO { String::new() } else { format!("{wire} of antenna wire, ") };
+    let pieces = result.takeoff.pieces.iter().filter(|piece| piece.role.is_coax()).count();
     format!(
-        "{} needs {} of coax in {} pieces, {} of antenna wire for {elements} element{}, {} of radial and bonding wire",
+        "{} needs {} of coax in {pieces} piece{}, {wire}{} of radial and bonding wire for {elements} element{}",
         result.name(),
         coax_cut(result),
-        result.takeoff.pieces.iter().filter(|piece| piece.role.is_coax()).count(),
-        cut_of(result, PieceRole::AntennaWire),
-        if elements == 1 { "" } else { "s" },
+        plural(pieces),
         cut_of(result, PieceRole::Radial) + cut_of(result, PieceRole::BondWire),
+        plural(elements),
     )
 }
 

@@ -328,3 +328,12 @@ fn the_cure_of_a_bare_share_is_the_same_share_in_percent() {
     let ran = ProjectTest::new(&text).run(&["check"]).exits(1);
     assert!(ran.stderr().contains("write tax = \"21 %\""), "{}", ran.stderr());
 }
+
+#[test]
+fn verticals_need_no_antenna_wire() {
+    let text = run(&["start", "vertical-pair"]).exits(0).stdout();
+    let answer = ProjectTest::new(&text).run(&["parts"]).exits(0).stdout();
+    let first = answer.lines().next().unwrap();
+    assert!(first.contains("radial and bonding wire for 2 elements"), "{first}");
+    assert!(!first.contains("antenna wire"), "{first}");
+}
