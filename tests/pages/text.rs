@@ -187,3 +187,37 @@ fn a_template_that_does_not_work_says_which_and_why() {
     assert!(error.contains("plan.md") && error.contains("nothing_like_it"), "{error}");
     assert!(template_names().contains(&"sheet.css"));
 }
+
+/// The bench needs the resistor's value, the field what the whole loop reads: 470 ohm and two earths of 76.4 ohm are 623 ohm.
+/// Source: E24 value nearest to 552.6 − 76.4 ohm, worked by hand.
+#[test]
+fn the_build_sheet_has_the_value_of_the_termination() {
+    let pages = Sample::demo("two-ways-north-west").render();
+    let build = &pages["echelon/build.md"];
+    assert!(build.contains("470 ohm, the E24 value nearest"), "{build}");
+    assert!(
+        build.contains("470 ohm and both earths as read above, ± 20 %; 623 if these are as computed"),
+        "{build}"
+    );
+}
+
+/// Which leg is inverted, padded and delayed, and which hybrid comes first. Source: three in line as 1 : −2 : 1, front and
+/// delayed rear in hybrid 1 behind 3 dB pads, then the inverted, delayed middle in hybrid 2; the longer delay is the rear's.
+#[test]
+fn the_build_sheet_says_what_is_joined_in_each_hub() {
+    let pair = &Sample::demo("two-ways-north-west").render()["echelon/build.md"];
+    assert!(pair.contains("H1: B1 front + (B2 rear → D1 → inverter)"), "{pair}");
+    let cells = &Sample::demo("vertical-cells").render()["build.md"];
+    let cell = |n: usize, b: usize, d: usize| {
+        let group = format!("of group {n} from the left");
+        format!(
+            "H{n}: ((B{b} front {group} → pad 3.0 dB) + (B{} rear {group} → D{d} → pad 3.0 dB)) + (B{} middle {group} → D{} → inverter)",
+            b + 2,
+            b + 1,
+            d + 1
+        )
+    };
+    for hub in [cell(1, 1, 1), cell(2, 4, 3), "H3: R1 + R2".to_owned()] {
+        assert!(cells.contains(&hub), "{hub} missing in\n{cells}");
+    }
+}

@@ -1,6 +1,7 @@
 //! The build sheet: numbered steps in order, each with what must be done before it, and the points where work stops.
 
 mod field;
+mod join;
 mod prepare;
 mod step;
 

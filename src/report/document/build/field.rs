@@ -3,8 +3,10 @@
 use rust_decimal::Decimal;
 
 use super::step::{Block, Hold, Reading, Scene, Step, labels, runs, step};
+use crate::design::ArrayDesign;
 use crate::plan::ElementKind;
-use crate::project::Terrain;
+use crate::project::{Termination, Terrain};
+use crate::reception::Ends;
 use crate::report::document::show;
 use crate::takeoff::PieceRole;
 use crate::units::Length;
@@ -225,14 +227,16 @@ fn cables(scene: &Scene<'_>) -> Block {
 /// What is read at every element and every laid cable.
 fn element_readings(scene: &Scene<'_>) -> Vec<Reading> {
     let mut readings = Vec::new();
-    for element in scene.layouts().flat_map(|layout| &layout.elements) {
+    let arrays = scene.option.design.arrays.iter();
+    for (array, element) in
+        arrays.flat_map(|array| array.plan.layout.elements.iter().map(move |e| (array, e)))
+    {
         let name = &element.name;
         match &element.kind {
-            ElementKind::Wire(_) => {
-                let good = "termination resistor plus both earths, ± 20 %";
+            ElementKind::Wire(wire) => {
                 readings.push(Reading::new(
                     format!("{name}: wire lifted from the box, wire to earth, ohm"),
-                    good,
+                    loop_resistance(array, wire.termination),
                 ));
                 readings
                     .push(Reading::new(format!("{name}: across the socket of the feed box, ohm"), "under 1"));
@@ -247,9 +251,33 @@ fn element_readings(scene: &Scene<'_>) -> Vec<Reading> {
     }
     for piece in scene.laid() {
         let what = format!("{}: far end open; far end shorted, ohm", piece.label);
-        readings.push(Reading::new(what, "open: no reading; shorted: same as its equals"));
+        let good = if piece.match_group.is_empty() {
+            "open: no reading; shorted: a few ohms".to_owned()
+        } else {
+            format!("open: no reading; shorted: the same as the others of group {}", piece.match_group)
+        };
+        readings.push(Reading::new(what, good));
     }
     readings
+}
+
+/// What a meter reads round a wire: its resistor and the earths at both ends, which were read before.
+fn loop_resistance(array: &ArrayDesign, termination: Termination) -> String {
+    let built = match array.ends {
+        Ends::AsBuilt { earth, resistor } => match termination {
+            Termination::Computed => Some((resistor, earth)),
+            Termination::Resistor(given) => Some((given, earth)),
+            Termination::Matched | Termination::Reflection(_) => None,
+        },
+        Ends::Matched => None,
+    };
+    match built {
+        Some((resistor, earth)) => {
+            let sum = resistor.ohms() + 2.0 * earth.ohms();
+            format!("{resistor} and both earths as read above, ± 20 %; {sum:.0} if these are as computed")
+        }
+        None => "the termination resistor and both earths as read above, ± 20 %".to_owned(),
+    }
 }
 
 fn close(scene: &Scene<'_>) -> Block {

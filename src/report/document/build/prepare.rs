@@ -1,5 +1,6 @@
 //! Everything before the field: permission, bench, stakes.
 
+use super::join::joined;
 use super::step::{Block, Hold, Reading, Scene, Step, labels, step};
 use crate::report::document::show;
 use crate::takeoff::PieceRole;
@@ -87,7 +88,9 @@ fn boxes(scene: &Scene<'_>, steps: &mut Vec<Step>) {
     }
     if let Some((count, places)) = scene.places("termination-box") {
         let what = format!("Build and test {count} termination boxes: {places}");
-        step(steps, ("termination-bench", "T35"), &[], what, "read the resistor before the lid goes on");
+        let resistors = scene.terminations().join("; ");
+        let detail = format!("{resistors}; read the resistor before the lid goes on");
+        step(steps, ("termination-bench", "T35"), &[], what, detail);
     }
     if let Some((count, places)) = scene.places("choke") {
         let what = format!("Make {count} chokes");
@@ -99,7 +102,12 @@ fn boxes(scene: &Scene<'_>, steps: &mut Vec<Step>) {
             .filter_map(|role| scene.places(role).map(|(n, at)| format!("{n} × {role} ({at})")))
             .collect();
         let what = format!("Build and test {count} hub boxes: {places}");
-        let detail = if inside.is_empty() { String::new() } else { format!("inside: {}", inside.join(", ")) };
+        let mut detail =
+            if inside.is_empty() { String::new() } else { format!("inside: {}; ", inside.join(", ")) };
+        let arrays = scene.option.design.arrays.iter().map(|array| &array.plan);
+        let joined: Vec<String> = arrays.flat_map(|plan| joined(&plan.feed, &plan.layout)).collect();
+        detail.push_str("joined, + being a hybrid and the innermost brackets first: ");
+        detail.push_str(&joined.join("; "));
         step(steps, ("hub-bench", "T36"), &[], what, detail);
     }
 }

@@ -83,6 +83,29 @@ impl<'a> Scene<'a> {
         (count > Decimal::ZERO).then(|| (count, show::names(self.in_layout_order(&names))))
     }
 
+    /// What stands in the termination boxes, once a kind of wire, with the boxes when there are several kinds.
+    pub(super) fn terminations(&self) -> Vec<String> {
+        let arrays = self.option.design.arrays.iter().filter(|array| !array.termination_reason.is_empty());
+        let mut kinds: Vec<(&str, Vec<&str>)> = Vec::new();
+        for array in arrays {
+            let names = array.plan.layout.points.iter().filter(|point| point.kind == PointKind::Termination);
+            let names = names.map(|point| point.name.as_str());
+            match kinds.iter_mut().find(|(reason, _)| *reason == array.termination_reason) {
+                Some((_, known)) => known.extend(names),
+                None => kinds.push((&array.termination_reason, names.collect())),
+            }
+        }
+        let one = kinds.len() == 1;
+        let words = |(reason, names): &(&str, Vec<&str>)| {
+            if one {
+                (*reason).to_owned()
+            } else {
+                format!("{}: {reason}", show::names(names.iter().copied()))
+            }
+        };
+        kinds.iter().map(words).collect()
+    }
+
     /// Names in the order of the layout, so that runs of posts can be drawn together.
     fn in_layout_order(&self, names: &[&str]) -> Vec<&'a str> {
         let mut ordered: Vec<&'a str> = Vec::new();
