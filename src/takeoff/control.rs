@@ -42,6 +42,22 @@ fn has_field_hub(array: &ArrayDesign) -> bool {
     array.plan.feed.hubs.iter().any(|hub| hub.outputs > 0)
 }
 
+/// Whether direct current goes on along a line: every main line has it; a run only when amplifiers stand at the elements, for
+/// a hub's amplifier sits at the head of its main line.
+fn carries_current(array: &ArrayDesign, line: &Line) -> bool {
+    match line.role {
+        LineRole::Main => true,
+        LineRole::Run => active_elements(array) > 0,
+        LineRole::Branch | LineRole::Delay => false,
+    }
+}
+
+/// Whether control cable lies beside a line: where current goes on, and along the runs to hubs that are switched.
+fn has_cable_beside(array: &ArrayDesign, line: &Line) -> bool {
+    let switched_run = line.role == LineRole::Run && array.plan.feed.switch.states.len() > 1;
+    carries_current(array, line) || switched_run
+}
+
 /// Control pieces, supply, bias tees.
 pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>, array: &ArrayDesign) {
     let conductors = conductors(array);
@@ -72,8 +88,7 @@ fn add_bias_tees(tally: &mut Tally<'_>, array: &ArrayDesign) {
         }
     }
     if array.spec.feed.power == Power::Main {
-        let carries = |line: &&Line| matches!(line.role, LineRole::Main | LineRole::Run);
-        let fed = array.plan.feed.lines.iter().filter(carries);
+        let fed = array.plan.feed.lines.iter().filter(|line| carries_current(array, line));
         for line in fed.filter(|_| has_field_hub(array)) {
             for end in [line.termini.from, line.termini.to] {
                 let why = "direct current along a coax line: one at each end";
@@ -83,12 +98,12 @@ fn add_bias_tees(tally: &mut Tally<'_>, array: &ArrayDesign) {
     }
 }
 
-/// Control cable goes beside the main line and every run, with the same four lengths.
+/// Control cable goes beside the main line and the runs that need it, with the same four lengths.
 fn add_cables(tally: &mut Tally<'_>, scene: &Scene<'_>, array: &ArrayDesign, conductors: u32) {
     let allowances =
         Allowances { practice: &scene.project.practice, route_factor: scene.design.route_factor };
-    let beside = |line: &&Line| matches!(line.role, LineRole::Main | LineRole::Run);
-    let lines: Vec<&Line> = array.plan.feed.lines.iter().filter(beside).collect();
+    let lines: Vec<&Line> =
+        array.plan.feed.lines.iter().filter(|line| has_cable_beside(array, line)).collect();
     for line in lines {
         tally.push(cable_beside(tally, &allowances, array, line, conductors));
     }

@@ -62,3 +62,33 @@ fn two_echelon_pairs_take_four_feed_boxes_and_four_terminations() {
     assert_eq!(count(&parts, "termination-box"), expect["terminations"].as_integer().unwrap());
     assert_eq!(count(&parts, "ground-rod"), 16, "two rods at each of eight wire ends in average soil");
 }
+
+/// A hub amplifier sits between the last combiner and the main line: its current comes along the main line and no further.
+/// With bias tees it takes two of them, one at each end. Active verticals stand beyond the runs, and theirs goes on.
+/// Source: worked by hand from where the amplifier sits.
+#[test]
+fn the_current_of_a_hub_amplifier_stops_at_the_hub() {
+    let stages = "echelon = { stagger = \"60 ft\" }\nbroadside = { spacing = \"400 ft\" }\n";
+    let wires = |feed: &str| {
+        let stages = format!("{stages}[array.feed]\namplifier = \"hub\"\n{feed}");
+        parts("wire = { length = \"176 m\" }", &stages)
+    };
+    let controls = |parts: &Value| {
+        let pieces = parts["pieces"].as_array().unwrap();
+        let control = pieces.iter().filter(|piece| piece["role"] == "control");
+        control.map(|piece| piece["label"].as_str().unwrap().to_owned()).collect::<Vec<_>>()
+    };
+    let by_cable = wires("");
+    assert_eq!(controls(&by_cable), ["C-M1"]);
+    assert_eq!(count(&by_cable, "bias-tee"), 0);
+    let by_coax = wires("power = \"main\"\n");
+    assert_eq!(controls(&by_coax), [""; 0]);
+    assert_eq!(count(&by_coax, "bias-tee"), 2);
+    let active = parts(
+        "vertical = { height = \"6 m\", active = true }",
+        "endfire = { spacing = \"60 ft\" }\nbroadside = { spacing = \"400 ft\" }\n",
+    );
+    let mut labels = controls(&active);
+    labels.sort();
+    assert_eq!(labels, ["C-M1", "C-R1", "C-R2"]);
+}
