@@ -157,8 +157,10 @@ fn lengths_of(project: &Project, part: PartChoice, pieces: &[&Piece]) -> Lengths
     let mut roles: Vec<String> = pieces.iter().map(|piece| piece.role.word().to_owned()).collect();
     roles.sort();
     roles.dedup();
-    let reason = roles.iter().map(|role| in_words(role, pieces)).collect();
+    let mut reason: Vec<String> = roles.iter().map(|role| in_words(role, pieces)).collect();
     let waste = roles.iter().filter_map(|role| project.practice.waste.get(role)).max().copied();
+    let total: Length = pieces.iter().map(|piece| piece.cut).sum();
+    reason.extend(waste.map(|waste| with_waste(total, waste)));
     let on_hand = stock_lengths(project, &part);
     let pieces = pieces
         .iter()
@@ -169,6 +171,12 @@ fn lengths_of(project: &Project, part: PartChoice, pieces: &[&Piece]) -> Lengths
         })
         .collect();
     Lengths { part, roles, pieces, on_hand, waste: waste.unwrap_or_default(), reason }
+}
+
+/// What waste given for goods cut from length asks for beside the cut plan, which has its own offcuts.
+fn with_waste(total: Length, waste: Percent) -> String {
+    let least = total.decimal_metres() * (Decimal::ONE + waste.ratio());
+    format!("waste {waste} as given: {} m at least from stock and packs", least.normalize())
 }
 
 fn in_words(role: &str, pieces: &[&Piece]) -> String {

@@ -176,3 +176,14 @@ fn an_offcut_serves_only_what_fits_on_it() {
     assert_eq!(find("my-wire")["on_hand"], 184);
     assert_eq!(find("my-wire")["amount"], "0.00");
 }
+
+/// 176 m and half as much again are 264 m: two drums of 250 m, and `why` says for what. Source: worked by hand.
+#[test]
+fn waste_that_was_asked_for_is_named_where_it_is_bought() {
+    let text =
+        run(&["start", "single-wire"]).exits(0).stdout().replace("length = \"176 m\"", "length = \"168 m\"")
+            + "\n[practice]\nwaste = { antenna-wire = \"50 %\" }\n";
+    let said = ProjectTest::new(&text).run(&["why", "wire-cu16"]).exits(0).stdout();
+    assert!(said.contains("waste 50 % as given: 264 m at least from stock and packs"), "{said}");
+    assert!(said.contains("2 × 250 m"), "{said}");
+}
