@@ -1,6 +1,7 @@
 //! Control cable, direct current to amplifiers.
 
 use super::model::{Piece, PieceRole, Reason};
+use super::support::{coax_impedance, line_impedance};
 use super::tally::{Tally, Want};
 use super::{ArrayDesign, Scene};
 use crate::catalogue::PartChoice;
@@ -84,7 +85,8 @@ fn add_bias_tees(tally: &mut Tally<'_>, array: &ArrayDesign) {
                 None => "RX".to_owned(),
             };
             let why = "feeds direct current into the leg of an active vertical";
-            tally.add("bias-tee", &Want::any(), &place, 1, why);
+            let want = Want::any().with("z_ohm", coax_impedance(array));
+            tally.add("bias-tee", &want, &place, 1, why);
         }
     }
     if array.spec.feed.power == Power::Main {
@@ -92,7 +94,8 @@ fn add_bias_tees(tally: &mut Tally<'_>, array: &ArrayDesign) {
         for line in fed.filter(|_| has_field_hub(array)) {
             for end in [line.termini.from, line.termini.to] {
                 let why = "direct current along a coax line: one at each end";
-                tally.add("bias-tee", &Want::any(), &layout.point(end).name, 1, why);
+                let want = Want::any().with("z_ohm", line_impedance(array, line.role));
+                tally.add("bias-tee", &want, &layout.point(end).name, 1, why);
             }
         }
     }

@@ -3,6 +3,7 @@
 use super::Scene;
 use super::earth::plain_piece;
 use super::model::{PieceRole, Reason};
+use super::support::line_impedance;
 use super::tally::{Tally, Want};
 use crate::plan::LineRole;
 use crate::plan::layout::{Fixture, Shelter};
@@ -15,15 +16,16 @@ const ENTRY_BOND: Length = Length::from_mm(5_000);
 /// One entry a site, one coax arrester a main.
 pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>) {
     for array in &scene.design.arrays {
+        let want = Want::any().with("z_ohm", line_impedance(array, LineRole::Main));
         let mains = array.plan.feed.lines.iter().filter(|line| line.role == LineRole::Main);
         for _ in mains {
-            tally.add("coax-arrester", &Want::any(), "RX", 1, "one a main line, at the entry panel");
+            tally.add("coax-arrester", &want, "RX", 1, "one a main line, at the entry panel");
         }
         if scene.project.practice.hub_arresters == HubArresters::Bought {
             for point in &array.plan.layout.points {
                 if point.fixtures.contains(&Fixture::HubBox(Shelter::Outdoors)) {
                     let why = "on the outgoing line of a hub (practice.hub-arresters)";
-                    tally.add("coax-arrester", &Want::any(), &point.name, 1, why);
+                    tally.add("coax-arrester", &want, &point.name, 1, why);
                 }
             }
         }

@@ -3,7 +3,7 @@
 use super::ArrayDesign;
 use super::tally::{Tally, Want};
 use crate::plan::layout::Support;
-use crate::plan::{Fixture, Point};
+use crate::plan::{Fixture, LineRole, Point};
 use crate::project::Supports;
 
 /// Counts the fixtures of wires, point by point.
@@ -34,7 +34,11 @@ pub(super) fn take_off(tally: &mut Tally<'_>, array: &ArrayDesign) {
 /// The impedance of the branch cable in ohms, as the catalogue writes it.
 pub(super) fn coax_impedance(array: &ArrayDesign) -> String {
     let cable = array.plan.feed.legs.first().and_then(|leg| leg.branch);
-    let role = cable.map_or(crate::plan::LineRole::Main, |line| array.plan.feed.line(line).role);
+    line_impedance(array, cable.map_or(LineRole::Main, |line| array.plan.feed.line(line).role))
+}
+
+/// The impedance of the cable that lines of a role are cut from, ohms, as attributes write it.
+pub(super) fn line_impedance(array: &ArrayDesign, role: LineRole) -> String {
     let data = array.cables.of(role).data.as_ref();
     data.and_then(|cable| cable.z0_ohm).map_or_else(|| "75".to_owned(), |z0| z0.normalize().to_string())
 }

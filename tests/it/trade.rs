@@ -92,3 +92,33 @@ fn the_current_of_a_hub_amplifier_stops_at_the_hub() {
     labels.sort();
     assert_eq!(labels, ["C-M1", "C-R1", "C-R2"]);
 }
+
+fn ids(parts: &Value, role: &str) -> Vec<String> {
+    let items = parts["items"].as_array().unwrap();
+    items
+        .iter()
+        .filter(|item| item["role"] == role)
+        .map(|item| item["part"].as_str().unwrap().to_owned())
+        .collect()
+}
+
+/// A 50-ohm array is 50 ohm to the entry. Source: worked by hand, an arrester or bias tee of 75 ohm in a 50-ohm line reflects.
+#[test]
+fn what_stands_in_a_line_has_its_impedance() {
+    let feed = "[array.feed]\nbranch = \"coax50-58\"\ndelay = \"coax50-58\"\nmain = \"coax50-58\"\n";
+    let stages = format!("endfire = {{ spacing = \"60 ft\" }}\n{feed}");
+    let parts = parts("vertical = { height = \"6 m\", active = true }", &stages);
+    assert_eq!(ids(&parts, "coax-arrester"), ["arrester-coax-50"]);
+    assert_eq!(ids(&parts, "bias-tee"), ["bias-tee-50"]);
+}
+
+/// Every mast of the catalogue can be guyed from it: 12 m takes √(8.4² + 7.2²) + 1 = 12.1 m. Source: worked by hand.
+#[test]
+fn every_mast_of_the_catalogue_has_guys_that_reach() {
+    for height in ["8 m", "10 m", "12 m"] {
+        let parts = parts(&format!("vertical = {{ height = \"{height}\", active = false }}"), "");
+        let guys = ids(&parts, "guy");
+        assert!(guys.iter().all(|id| id.starts_with("guy-") && !id.contains("length")), "{height}: {guys:?}");
+        assert_eq!(count(&parts, "guy"), 3, "{height}");
+    }
+}
