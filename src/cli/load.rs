@@ -12,7 +12,7 @@ use crate::catalogue::{self, Catalogue, CatalogueFile, Source};
 use crate::design;
 use crate::pricing;
 use crate::problem::Problems;
-use crate::project::{self, Project};
+use crate::project::{self, Assumption, Project};
 use crate::reception::{ArrayReport, Weighting};
 use crate::report::{self, OptionResult};
 use crate::takeoff;
@@ -130,6 +130,8 @@ fn read_and_work(arguments: &ProjectArgs, purpose: Purpose) -> Result<(Checked, 
     let project = arguments.option.as_deref().map_or_else(|| project.clone(), |option| project.only(option));
     checked.project = Some(project.clone());
     let catalogue = supply.catalogue;
+    let mut project = project;
+    project.assumptions.push(entry_bond());
     let settled = design::settle(&project, &catalogue);
     problems.extend(settled.problems);
     if purpose == Purpose::Build {
@@ -151,6 +153,15 @@ fn read_and_work(arguments: &ProjectArgs, purpose: Purpose) -> Result<(Checked, 
     }
     let hash = checked.hash.clone();
     Ok((checked, Some(Work { project, catalogue, results, problems, hash })))
+}
+
+/// The bonding wire at the station entry has no key: somebody has to measure it.
+fn entry_bond() -> Assumption {
+    Assumption {
+        key: "(no key) bonding wire at the station entry".to_owned(),
+        value: takeoff::station::ENTRY_BOND.to_string(),
+        why: "from the entry to the building's electrodes, until it is measured on site".to_owned(),
+    }
 }
 
 /// How old the prices are that the bills use.

@@ -6,18 +6,14 @@ use crate::units::{Length, Money};
 /// Plans a job: on-hand lengths first (shortest first), then the offer whose total is least.
 ///
 /// Pieces of one group stay on one length where any length can hold them. Every offer is tried alone, then each reel is
-/// replaced by the cheapest one that still holds what is cut from it; ties go to the first offer.
+/// replaced by the cheapest one that still holds what is cut from it; ties go to the first offer. Some reels of one offer
+/// with the rest from another are tried as well.
 pub fn plan(job: &CutJob) -> CutPlan {
     let (items, split_groups) = items(job);
     let mut on_hand: Vec<CutReel> = job.stock.iter().filter_map(on_hand_reel).collect();
     on_hand.sort_by_key(|reel| reel.length);
     let (reels, rest) = fill_on_hand(job, on_hand, items);
-    let bought = job
-        .stock
-        .iter()
-        .filter_map(|stock| buy_from(job, stock, &rest))
-        .min_by(|a, b| a.rank().cmp(&b.rank()))
-        .unwrap_or_else(|| Purchase { reels: Vec::new(), unplaced: rest.clone(), cost: None });
+    let bought = buy(job, &rest);
     let mut plan = CutPlan { split_groups, ..CutPlan::default() };
     plan.reels.extend(reels.into_iter().filter(|reel| !reel.cuts.is_empty()));
     plan.reels.extend(bought.reels.into_iter().map(|reel| cheapest_that_holds(job, reel)));
@@ -147,6 +143,37 @@ fn put(reel: &mut CutReel, bundle: &Bundle, loss: Length) {
         reel.cuts.push(Cut { label: piece.label.clone(), cut: piece.cut, from, to });
         reel.left = (reel.length - to - loss).max(Length::ZERO);
     }
+}
+
+/// The cheapest purchase from one offer, or from some reels of one offer and the rest from another.
+fn buy(job: &CutJob, rest: &[Bundle]) -> Purchase {
+    let alone = |rest: &[Bundle]| {
+        let purchases = job.stock.iter().filter_map(|stock| buy_from(job, stock, rest));
+        purchases.min_by(|a, b| a.rank().cmp(&b.rank()))
+    };
+    let nothing = || Purchase { reels: Vec::new(), unplaced: rest.to_vec(), cost: None };
+    let mut best = alone(rest).unwrap_or_else(nothing);
+    for stock in &job.stock {
+        let StockLength::Reel { offer, length, price: Some(price), available, least: 1 } = stock else {
+            continue;
+        };
+        let most = available.unwrap_or(u64::MAX).min(rest.len() as u64);
+        for count in 1..=most {
+            let some = reels_of(job, offer, *length, Some(count), 1, rest);
+            if some.unplaced.is_empty() || (some.reels.len() as u64) < count {
+                break;
+            }
+            let Some(other) = alone(&some.unplaced) else { break };
+            let paid = price.times(rust_decimal::Decimal::from(some.reels.len()));
+            let cost = other.cost.map(|cost| cost + paid);
+            let reels = some.reels.into_iter().chain(other.reels).collect();
+            let mixed = Purchase { reels, unplaced: other.unplaced, cost };
+            if mixed.rank() < best.rank() {
+                best = mixed;
+            }
+        }
+    }
+    best
 }
 
 fn buy_from(job: &CutJob, stock: &StockLength, rest: &[Bundle]) -> Option<Purchase> {
@@ -289,6 +316,21 @@ mod tests {
         let plan = plan(&job(&[("A", 290_000, ""), ("B", 40_000, "")], vec![reel(305_000), reel(50_000)]));
         let lengths: Vec<Length> = plan.reels.iter().map(|reel| reel.length).collect();
         assert_eq!(lengths, [Length::from_mm(305_000), Length::from_mm(50_000)]);
+    }
+
+    /// 305 m at 305 and 60 m by the metre at 2 a metre cost 425; two reels cost 610, all by the metre 700. Source: worked by hand.
+    #[test]
+    fn one_reel_and_the_rest_by_the_metre_can_be_cheapest() {
+        let metre = StockLength::Metre {
+            offer: "metre".to_owned(),
+            price: Some(Money::new(rust_decimal::Decimal::TWO)),
+            step: Length::from_mm(1_000),
+            least_steps: 1,
+            most_steps: None,
+        };
+        let plan = plan(&job(&[("A", 290_000, ""), ("B", 60_000, "")], vec![reel(305_000), metre]));
+        let lengths: Vec<Length> = plan.reels.iter().map(|reel| reel.length).collect();
+        assert_eq!(lengths, [Length::from_mm(305_000), Length::from_mm(60_000)]);
     }
 
     #[test]

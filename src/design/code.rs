@@ -19,6 +19,10 @@ crate::problem_codes! {
     POOR_EARTH = "poor-earth";
     /// A number of legs that no equal tree of 2- and 3-way hybrids has.
     ROW_NOT_BUILDABLE = "row-not-buildable";
+    /// A hub stands closer to an antenna earth than its surge rod may.
+    HUB_NEAR_EARTH = "hub-near-earth";
+    /// A given termination reflects much.
+    TERMINATION_MISMATCH = "termination-mismatch";
     /// A key that is read, but that nothing uses in this version.
     NOT_USED_YET = "not-used-yet";
     /// The trim allowance is smaller than the cable's own spread.

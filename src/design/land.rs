@@ -1,7 +1,8 @@
 //! What the land says to a layout: paths under wires, keep-out areas, radials that would touch.
 
 use super::code;
-use crate::plan::{ArrayPlan, Fixture, PointKind, SitePosition, Span};
+use crate::plan::layout::Shelter;
+use crate::plan::{ArrayPlan, Fixture, Point, PointKind, SitePosition, Span};
 use crate::problem::{Problem, Problems};
 use crate::project::{ArraySpec, Crossing, CrossingKind, KeepOut, Project};
 use crate::units::Length;
@@ -20,6 +21,7 @@ pub(super) fn check(project: &Project, spec: &ArraySpec, plan: &ArrayPlan, probl
         inside(spec, plan, area, problems);
     }
     radials(project, spec, plan, problems);
+    hubs(spec, plan, problems);
 }
 
 fn under_wire(
@@ -108,5 +110,32 @@ fn radials(project: &Project, spec: &ArraySpec, plan: &ArrayPlan, problems: &mut
                 return;
             }
         }
+    }
+}
+
+/// A hub's surge rod stands at least this far from every antenna earth (common practice, no source).
+const ROD_DISTANCE_M: f64 = 5.0;
+
+/// Hubs outdoors whose surge rod cannot stand beside them.
+fn hubs(spec: &ArraySpec, plan: &ArrayPlan, problems: &mut Problems) {
+    let has = |point: &&Point, wanted: fn(&Fixture) -> bool| point.fixtures.iter().any(wanted);
+    let earths: Vec<&Point> =
+        plan.layout.points.iter().filter(|p| has(p, |f| matches!(f, Fixture::Earth(_)))).collect();
+    let outdoors = |fixture: &Fixture| *fixture == Fixture::HubBox(Shelter::Outdoors);
+    let mut near = Vec::new();
+    for hub in plan.layout.points.iter().filter(|p| has(p, outdoors)) {
+        let nearest =
+            earths.iter().min_by(|a, b| hub.at.distance_m(a.at).total_cmp(&hub.at.distance_m(b.at)));
+        let Some(earth) = nearest else { continue };
+        let metres = hub.at.distance_m(earth.at);
+        if metres < ROD_DISTANCE_M {
+            near.push(format!("{} is {metres:.1} m from {}", hub.name, earth.name));
+        }
+    }
+    if !near.is_empty() {
+        let place = spec.places.feed.get("hub").cloned().or_else(|| spec.places.name.clone());
+        let message = format!("{}: the hub's surge rod wants 5 m from every antenna earth", near.join(", "));
+        let help = "move the hub with `hub = { forward, right }` in [array.feed], or drive its rod 5 m away, clear of the radials";
+        problems.push(Problem::warning(code::HUB_NEAR_EARTH, place, message, help));
     }
 }

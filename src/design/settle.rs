@@ -12,6 +12,7 @@ use crate::plan::{Allowances, Cables, LineRole, check_impedance, choose_cables, 
 use crate::problem::{Problem, Problems};
 use crate::project::{ArraySpec, Combining, Project, Terrain};
 use crate::reception::{self, Weighting};
+use crate::units::ElectricalLength;
 
 /// A design with what was noticed on the way.
 #[derive(Clone, Debug)]
@@ -157,7 +158,8 @@ fn make_exact(project: &Project, design: &mut ArrayDesign) {
 
 /// The trim allowance must cover the cable's own spread of velocity factor and 1 % more.
 fn trim_spread(bench: &Bench<'_>, design: &ArrayDesign, problems: &mut Problems) {
-    let has_delay = design.plan.feed.lines.iter().any(|line| line.role == LineRole::Delay);
+    let lines = &design.plan.feed.lines;
+    let has_delay = lines.iter().any(|line| line.delay > ElectricalLength::ZERO);
     let cable = &design.cables.of(LineRole::Delay).part;
     let part = bench.catalogue.parts.get(cable.id());
     let spread = part.and_then(|part| part.number("vf_tol")).and_then(|spread| spread.to_f64());

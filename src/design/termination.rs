@@ -41,6 +41,7 @@ pub(super) fn choose(
     let terms = radio::line_terms(project.frequency, soil.index_squared(project.frequency), height, radius);
     let z0 = terms.constants(project.frequency).impedance.re;
     let computed = nearest_e24(Resistance::new(z0 - earth.ohms())).unwrap_or_default();
+    warn_mismatch(spec, wire.termination, z0, earth, problems);
     let reason = match wire.termination {
         Termination::Computed => format!(
             "{computed}, the E24 value nearest to the wire's {z0:.1} ohm less {:.1} ohm of its earth set ({} rods; half or double with the season)",
@@ -63,6 +64,36 @@ pub(super) fn choose(
         }
     };
     Choice { ends: Ends::AsBuilt { earth, resistor: computed }, reason }
+}
+
+/// A given resistor whose reflection, earth included, spoils the rear (|Γ| above 0.3, beyond what the method was compared
+/// for).
+fn warn_mismatch(
+    spec: &ArraySpec,
+    termination: Termination,
+    z0: f64,
+    earth: Resistance,
+    problems: &mut Problems,
+) {
+    const MUCH: f64 = 0.3;
+    let Termination::Resistor(given) = termination else { return };
+    let total = given.ohms() + earth.ohms();
+    let reflection = (z0 - total) / (z0 + total);
+    if reflection.abs() > MUCH {
+        let message = format!(
+            "the termination of {given} with {:.0} ohm of earth reflects {:.0} % of the current: the wire is {z0:.0} ohm",
+            earth.ohms(),
+            100.0 * reflection.abs()
+        );
+        let help =
+            "leave `termination` out to have it computed; front-to-back depends on it, directivity hardly";
+        problems.push(Problem::warning(
+            code::TERMINATION_MISMATCH,
+            spec.places.element.clone(),
+            message,
+            help,
+        ));
+    }
 }
 
 fn warn_poor(

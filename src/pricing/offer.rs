@@ -129,12 +129,62 @@ pub(super) fn buy_counted(bill: &mut Bill, market: &Market<'_>, need: &Counted, 
         buy_mixed(bill, market, part, need, missing, &offers);
         return;
     };
+    if let Some((first, second)) = cheaper_pair(&offers, missing, purchase.total) {
+        buy_pair(bill, market, part, need, (&first, &second));
+        return;
+    }
     hint_break(bill, &offers, purchase, missing, market);
     fill_line(&mut line, &purchase.priced, purchase.packs, market);
     if let Some(second) = ranked.get(1) {
         let total = second.total.rounded(&market.project.currency);
         line.reason.push(format!("next best: {} × `{}` = {total}", second.packs, second.priced.offer.id));
     }
+    bill.lines.push(line);
+}
+
+/// Some packs of one offer with the rest from another, where that costs less than `alone`.
+fn cheaper_pair<'a>(
+    offers: &[Priced<'a>],
+    missing: Decimal,
+    alone: Money,
+) -> Option<(Purchase<'a>, Purchase<'a>)> {
+    let mut best: Option<(Purchase<'a>, Purchase<'a>)> = None;
+    for priced in offers.iter().filter(|priced| priced.kind == Kind::Plain) {
+        let Some(price) = priced.price else { continue };
+        let most = packs_for(missing, priced.offer.pack)
+            .saturating_sub(1)
+            .min(priced.offer.available.unwrap_or(u64::MAX));
+        for packs in priced.offer.min_packs..=most {
+            let rest = missing - priced.offer.pack * Decimal::from(packs);
+            let others: Vec<Priced<'a>> =
+                offers.iter().filter(|other| other.offer.id != priced.offer.id).cloned().collect();
+            let Some(second) = ranked(&others, rest).into_iter().next() else { continue };
+            let first = Purchase { priced: priced.clone(), packs, total: price.times(Decimal::from(packs)) };
+            let least = best.as_ref().map_or(alone, |(a, b)| a.total + b.total);
+            if first.total + second.total < least {
+                best = Some((first, second));
+            }
+        }
+    }
+    best
+}
+
+/// Two lines: what the first purchase delivers, and the rest.
+fn buy_pair(
+    bill: &mut Bill,
+    market: &Market<'_>,
+    part: &Part,
+    need: &Counted,
+    (first, second): (&Purchase<'_>, &Purchase<'_>),
+) {
+    let delivered = first.priced.offer.pack * Decimal::from(first.packs);
+    let mut line = blank_line(part, &need.roles, delivered + need.on_hand, need.on_hand, need.reason.clone());
+    fill_line(&mut line, &first.priced, first.packs, market);
+    bill.lines.push(line);
+    let rest = need.gross - need.on_hand - delivered;
+    let why = format!("the rest, {} {}, costs less this way", rest.normalize(), part.unit.word());
+    let mut line = blank_line(part, &need.roles, rest, Decimal::ZERO, vec![why]);
+    fill_line(&mut line, &second.priced, second.packs, market);
     bill.lines.push(line);
 }
 

@@ -9,7 +9,7 @@ mod earth;
 pub mod hub;
 pub mod model;
 mod spare;
-mod station;
+pub mod station;
 mod sundry;
 mod support;
 mod tally;

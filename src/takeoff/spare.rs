@@ -1,6 +1,6 @@
 //! Waste and spares by role, beside the net quantities.
 
-use rust_decimal::Decimal;
+use rust_decimal::{Decimal, RoundingStrategy};
 
 use super::tally::Tally;
 use crate::project::Project;
@@ -14,7 +14,7 @@ pub(super) fn add(tally: &mut Tally<'_>, project: &Project) {
         let role = key.0.as_str();
         let (waste, rule) = match project.practice.waste.get(role) {
             Some(given) => ((net * given.ratio()).ceil(), format!("waste, {given} as given")),
-            None => default_waste(role, net),
+            None => default_waste(role, tally.attribute(&key.1, "kind"), net),
         };
         tally.set_waste(&key, waste, rule);
         let (spare, rule) = match project.practice.spares.get(role) {
@@ -27,16 +27,27 @@ pub(super) fn add(tally: &mut Tally<'_>, project: &Project) {
     }
 }
 
-/// Connectors 5 %, at least 2; small consumables 15 %.
-fn default_waste(role: &str, net: Decimal) -> (Decimal, String) {
-    match role {
-        "plug" => {
+/// Connectors 5 %, at least 2; labels 20 %, staples, pegs, ties and lugs 10 %, tape and other small consumables 15 %.
+fn default_waste(role: &str, kind: Option<&str>, net: Decimal) -> (Decimal, String) {
+    let percent = |percent: i64| (net * Decimal::new(percent, 2), format!("waste, {percent} %"));
+    match (role, kind) {
+        ("plug", _) => {
             let five = (net * Decimal::new(5, 2)).ceil();
             (five.max(Decimal::TWO), "waste, 5 % but at least 2 (mis-crimps)".to_owned())
         }
-        "consumable" => ((net * Decimal::new(15, 2)).ceil(), "waste, 15 %".to_owned()),
+        ("consumable", Some("sealing-tape" | "cover-tape")) => {
+            let (metres, rule) = percent(15);
+            (metres.round_dp_with_strategy(2, RoundingStrategy::AwayFromZero), rule)
+        }
+        ("consumable", Some("label")) => whole(percent(20)),
+        ("consumable", Some("staple" | "peg" | "uv-tie" | "lug")) => whole(percent(10)),
+        ("consumable", _) => whole(percent(15)),
         _ => (Decimal::ZERO, String::new()),
     }
+}
+
+fn whole((quantity, rule): (Decimal, String)) -> (Decimal, String) {
+    (quantity.ceil(), rule)
 }
 
 /// Plugs 10 % but at least 4, one surge device for four but at least 1, one barrel, one hybrid, one termination box for

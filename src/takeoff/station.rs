@@ -11,7 +11,7 @@ use crate::project::HubArresters;
 use crate::units::Length;
 
 /// Wire from the entry to the building's electrodes until somebody has measured it (common practice, no source).
-const ENTRY_BOND: Length = Length::from_mm(5_000);
+pub const ENTRY_BOND: Length = Length::from_mm(5_000);
 
 /// One entry a site, one coax arrester a main.
 pub(super) fn take_off(tally: &mut Tally<'_>, scene: &Scene<'_>) {

@@ -80,4 +80,5 @@ fn label_cables(tally: &mut Tally<'_>) {
         "two labels a cable, one at each end",
     );
     tally.add("consumable", &kind("label"), "", boxes, "one label a box");
+    tally.add("consumable", &kind("label"), "", 1, "one label for the entry panel");
 }

@@ -129,6 +129,11 @@ impl<'a> Tally<'a> {
         }
     }
 
+    /// An attribute of a chosen part.
+    pub(super) fn attribute(&self, part: &PartChoice, key: &str) -> Option<&str> {
+        self.catalogue.parts.get(part.id())?.attribute(key)
+    }
+
     pub(super) fn push(&mut self, piece: Piece) {
         self.pieces.push(piece);
     }

@@ -139,6 +139,31 @@ fn a_foreign_price_needs_a_dated_rate() {
     totals_add_up(&json["options"][0]);
 }
 
+/// Eight rods at 8.50 or five for 36.00: one pack and three cost 61.50, eight singly 68.00, two packs 72.00. Source: worked by
+/// hand.
+#[test]
+fn packs_of_two_sizes_are_mixed_where_that_is_cheapest() {
+    let pair = WIRE
+        .replace("[prices]", "broadside = { spacing = \"100 m\" }\n[practice]\nrods-per-set = 2\n[prices]");
+    let offers = "part,offer,pack,price,currency,priced_on\nrod-1200,one,1,8.50,EUR,2026-02-01\nrod-1200,five,5,36.00,EUR,2026-02-01\n";
+    let json = ProjectTest::new(&pair)
+        .with("parts-catalog/offers.csv", offers)
+        .run(&["estimate", "--format", "json"])
+        .exits(0)
+        .json();
+    let rods: Vec<&Value> = json["options"][0]["lines"]
+        .as_array()
+        .unwrap()
+        .iter()
+        .filter(|line| line["part"] == "rod-1200")
+        .collect();
+    let bought: Vec<(&str, u64)> =
+        rods.iter().map(|line| (line["offer"].as_str().unwrap(), line["packs"].as_u64().unwrap())).collect();
+    assert_eq!(bought, [("five", 1), ("one", 3)]);
+    assert_eq!(rods.iter().map(|line| money(&line["amount"])).sum::<Decimal>(), Decimal::new(6150, 2));
+    totals_add_up(&json["options"][0]);
+}
+
 /// 20 % of (materials + freight); contingency on materials and freight only, never on tax.
 #[test]
 fn tax_and_contingency_stand_on_the_direct_cost() {
