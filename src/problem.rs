@@ -187,6 +187,17 @@ impl Problems {
         Self { list: kept }
     }
 
+    /// The same problems, those in files of these names placed in `folder`.
+    #[must_use]
+    pub fn in_folder(mut self, folder: &str, files: &[&str]) -> Self {
+        for place in self.list.iter_mut().filter_map(|problem| problem.place.as_mut()) {
+            if files.contains(&place.file.as_str()) {
+                place.file = format!("{folder}/{}", place.file);
+            }
+        }
+        self
+    }
+
     /// All of them by file, line and column, errors before warnings at one place; those without a place last.
     pub fn sorted(&self) -> Vec<&Problem> {
         let mut all: Vec<&Problem> = self.list.iter().collect();

@@ -63,6 +63,7 @@ fn check(folder: Option<&Path>, alone: bool) -> Result<Outcome, Failure> {
     let supply = supply(folder, alone)?;
     let mut problems = supply.problems;
     problems.extend(catalogue::health(&supply.catalogue));
+    let problems = problems.in_folder(&supply.folder, &catalogue::FILES);
     output::problems(&problems);
     let of = if supply.read.is_empty() { "the built-in files".to_owned() } else { supply.read.join(", ") };
     let catalogue = &supply.catalogue;

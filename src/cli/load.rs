@@ -118,7 +118,7 @@ fn read_and_work(arguments: &ProjectArgs, purpose: Purpose) -> Result<(Checked, 
     let stock = files.stock.as_ref().map(|(name, text)| (name.as_str(), text.as_str()));
     let (project, mut problems) = project::read(&files.name, &files.text, stock);
     let supply = Supply::read(&arguments.catalogue, &files.folder)?;
-    problems.extend(supply.problems);
+    problems.extend(supply.problems.in_folder(&supply.folder, &catalogue::FILES));
     let hash = files.hash(&supply.inputs);
     let mut checked =
         Checked { project: project.clone(), problems: problems.clone(), remarks: Vec::new(), hash };
@@ -146,7 +146,7 @@ fn read_and_work(arguments: &ProjectArgs, purpose: Purpose) -> Result<(Checked, 
         results.push(OptionResult { design, takeoff, bill });
     }
     problems.extend(ages(&project, &catalogue, &results));
-    let problems = problems.deduplicated();
+    let problems = problems.deduplicated().in_folder(&supply.folder, &catalogue::FILES);
     checked.problems = problems.clone();
     if problems.has_errors() {
         return Ok((checked, None));
@@ -268,6 +268,8 @@ pub(super) struct Supply {
     pub(super) repairs: String,
     /// The user's files read, by name.
     pub(super) read: Vec<String>,
+    /// The folder they lie in; empty for the built-in catalogue.
+    pub(super) folder: String,
     inputs: Vec<Vec<u8>>,
 }
 
@@ -287,6 +289,7 @@ impl Supply {
                 problems: Problems::default(),
                 repairs: String::new(),
                 read: Vec::new(),
+                folder: String::new(),
                 inputs: Vec::new(),
             });
         };
@@ -301,6 +304,7 @@ impl Supply {
             problems: loaded.problems,
             repairs: loaded.fixes.to_string(),
             read,
+            folder: folder.display().to_string(),
             inputs,
         })
     }
