@@ -1,5 +1,7 @@
 //! The cut list: every reel with its pieces from mark to mark.
 
+use std::collections::BTreeSet;
+
 use serde::Serialize;
 
 use super::proof::{self, Group, Proof};
@@ -8,7 +10,7 @@ use crate::cutting::{Cut, CutReel};
 use crate::pricing::PartCutPlan;
 use crate::report::drawing::cut_strip::{self, Fill, Strip, StripPiece};
 use crate::takeoff::{Piece, PieceRole};
-use crate::units::ElectricalLength;
+use crate::units::{ElectricalLength, Length};
 
 /// The cut list of one option.
 #[derive(Debug, Serialize)]
@@ -36,7 +38,12 @@ struct ReelView {
     left: String,
     left_is: &'static str,
     has_cables: bool,
+    /// The letters of equal groups on this reel; empty without.
+    groups: String,
+    columns: usize,
+    /// The trimmed pieces with their verb: "D1 is", "D1, D2 are"; empty without.
     delays: String,
+    sample: String,
     velocity_factor: String,
     proofs: Vec<Proof>,
     has_rough_trim: bool,
@@ -60,7 +67,7 @@ struct Row {
 #[derive(Debug, Serialize)]
 struct Loose {
     label: String,
-    role: &'static str,
+    role: String,
     part: String,
     finished: String,
     cut: String,
@@ -110,7 +117,7 @@ fn without_reel(option: &OptionInput<'_>) -> Vec<Loose> {
     let loose = option.takeoff.pieces.iter().filter(|piece| !planned(piece));
     let rows = loose.map(|piece| Loose {
         label: piece.label.clone(),
-        role: piece.role.word(),
+        role: show::role(piece.role),
         part: piece.part.id().to_owned(),
         finished: show::metres(piece.finished),
         cut: show::metres(piece.cut),
@@ -127,7 +134,12 @@ fn reel_view(
     let pieces: Vec<(&Cut, Option<&Piece>)> =
         reel.cuts.iter().map(|cut| (cut, piece_of(option, &cut.label))).collect();
     let known: Vec<&Piece> = pieces.iter().filter_map(|(_, piece)| *piece).collect();
-    let delays: Vec<&Piece> = known.iter().filter(|piece| is_trimmed(option, piece)).copied().collect();
+    let (delays, free): (Vec<&Piece>, Vec<&Piece>) =
+        known.iter().copied().partition(|piece| is_trimmed(option, piece));
+    let has_cables = known.iter().any(|piece| labels::is_cable(piece));
+    let groups: BTreeSet<&str> =
+        known.iter().map(|p| p.match_group.as_str()).filter(|g| !g.is_empty()).collect();
+    let delay_names = show::names(show::sorted(delays.iter().map(|piece| piece.label.as_str())));
     let proofs = proof::proofs(&known);
     let keep = reel.left >= input.project.practice.keep_at_least;
     ReelView {
@@ -137,16 +149,38 @@ fn reel_view(
         rows: pieces.iter().enumerate().map(|(n, (cut, piece))| row(n + 1, cut, *piece)).collect(),
         left: show::metres(reel.left),
         left_is: if keep { "keep: label it and hang it up" } else { "too short to keep" },
-        has_cables: known.iter().any(|piece| labels::is_cable(piece)),
+        has_cables,
+        columns: 8 + usize::from(has_cables) + usize::from(!groups.is_empty()),
+        groups: groups.into_iter().collect::<Vec<_>>().join(", "),
+        sample: sample(reel, &free),
         velocity_factor: delays
             .first()
             .and_then(|piece| piece.electrical.as_ref())
             .map(|electrical| show::velocity(electrical.velocity_factor))
             .unwrap_or_default(),
-        delays: show::names(delays.iter().map(|piece| piece.label.as_str())),
+        delays: match delays.len() {
+            0 => String::new(),
+            1 => format!("{delay_names} is"),
+            _ => format!("{delay_names} are"),
+        },
         has_rough_trim: proofs.iter().any(|proof| proof.is_rough),
         has_free_pieces: proofs.iter().any(|proof| proof.trim == "–" || proof.tolerance == "–"),
         proofs,
+    }
+}
+
+/// What the velocity factor of a reel is measured on: a shorter sample reads too coarsely, a longer one has its first dip
+/// far below the band.
+fn sample(reel: &CutReel, free: &[&Piece]) -> String {
+    const LEAST: Length = Length::from_mm(20_000);
+    const MOST: Length = Length::from_mm(60_000);
+    let long = free.iter().filter(|piece| (LEAST..=MOST).contains(&piece.cut) && piece.role.is_coax());
+    match long.min_by_key(|piece| piece.cut) {
+        Some(piece) => {
+            format!("{} of this reel ({} m), cut before the rest", piece.label, show::metres(piece.cut))
+        }
+        None if reel.left >= LEAST => "20 m or more of what is left over on this reel".to_owned(),
+        None => "a sample of this same reel, 20 m or more".to_owned(),
     }
 }
 

@@ -64,7 +64,7 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
         why: assumption.why.clone(),
     });
     View {
-        unpriced: purchase::missing(option),
+        unpriced: purchase::missing(input, option),
         invented: bill.lines.iter().filter(|line| show::is_invented(line, input.catalogue)).count(),
         priced: priced.count(),
         currency: currency.to_string(),
@@ -96,7 +96,7 @@ fn lines(option: &OptionInput<'_>, currency: &Currency) -> Vec<Row> {
         description: line.description.clone(),
         needed: show::quantity(line.needed, &line.unit),
         bought: show::quantity(line.bought, &line.unit),
-        left: show::quantity(line.left, &line.unit),
+        left: show::left(line, &option.bill.cut_plans),
         amount: match line.amount {
             Some(amount) => show::money(amount, currency),
             None if line.packs == 0 && line.on_hand >= line.needed => "from the shed".to_owned(),

@@ -66,7 +66,7 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
     let posts = points.map(|point| point.name.as_str()).collect::<BTreeSet<_>>().len();
     let currency = &input.project.currency;
     View {
-        unpriced: purchase::missing(option),
+        unpriced: purchase::missing(input, option),
         unplaced: super::cuts::unplaced(option),
         arrays: arrays(option),
         sheets: sheets.map(|(n, sheet)| sheet_row(n + 1, sheet)).collect(),

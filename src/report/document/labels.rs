@@ -45,7 +45,12 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
             .iter()
             .map(|strip| Row {
                 place: strip.id.clone(),
-                text: strip.text.clone(),
+                text: match strip.kind {
+                    LabelKind::Cable => strip.text.clone(),
+                    LabelKind::FeedBox | LabelKind::Termination | LabelKind::Hub | LabelKind::Station => {
+                        format!("{} {}", strip.id, strip.first)
+                    }
+                },
                 words: format!("{}, {}", strip.first, strip.second),
             })
             .collect(),

@@ -27,7 +27,7 @@ struct Beam {
 #[derive(Debug, Serialize)]
 struct LineRow {
     label: String,
-    what: &'static str,
+    what: String,
     from: String,
     to: String,
     straight: String,
@@ -80,17 +80,19 @@ fn lines(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<LineRow> {
         };
         let ends = place(option, &piece.from).zip(place(option, &piece.to));
         let (true, Some((from, to))) = (laid, ends) else { continue };
-        let bearing = from.bearing_to(to);
+        let bearing = (from.distance_m(to) >= 0.005).then(|| from.bearing_to(to));
         rows.push(LineRow {
             label: piece.label.clone(),
-            what: piece.role.word(),
+            what: show::role(piece.role),
             from: piece.from.clone(),
             to: piece.to.clone(),
             straight: piece.straight.map(show::metres).unwrap_or_default(),
             routed: piece.routed.map(show::metres).unwrap_or_default(),
             finished: show::metres(piece.finished),
-            bearing: show::degrees(bearing),
-            compass: show::compass(bearing, declination).unwrap_or_default(),
+            bearing: bearing.map_or_else(|| "–".to_owned(), show::degrees),
+            compass: bearing
+                .map_or_else(|| Some("–".to_owned()), |at| show::compass(at, declination))
+                .unwrap_or_default(),
         });
     }
     rows

@@ -88,7 +88,7 @@ pub(super) fn groups(pieces: &[Piece]) -> Vec<Group> {
     groups
         .map(|((_, letter, role), members)| Group {
             letter: letter.to_owned(),
-            part: format!("{role}, {}", members[0].part.id()),
+            part: format!("{}, {}", role.replace('-', " "), members[0].part.id()),
             reasons: reasons(&members),
             members: members.into_iter().map(member).collect(),
         })

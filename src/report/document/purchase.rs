@@ -7,7 +7,7 @@ use serde::Serialize;
 
 use super::{Input, OptionInput, show};
 use crate::cutting::{CutReel, ReelSource};
-use crate::pricing::BillLine;
+use crate::pricing::{Bill, BillLine, PartCutPlan};
 use crate::units::{Currency, Money};
 
 /// The purchase list of one option.
@@ -17,7 +17,6 @@ pub(super) struct View {
     suppliers: Vec<Supplier>,
     shed: Vec<ShedRow>,
     reels: Vec<Reel>,
-    hints: Vec<String>,
     currency: String,
     invented: bool,
 }
@@ -26,6 +25,7 @@ pub(super) struct View {
 #[derive(Debug, Serialize)]
 pub(super) struct Missing {
     part: String,
+    description: String,
     quantity: String,
     why: String,
 }
@@ -78,20 +78,21 @@ struct Reel {
 pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
     let currency = &input.project.currency;
     View {
-        unpriced: missing(option),
-        suppliers: suppliers(&option.bill.lines, currency),
+        unpriced: missing(input, option),
+        suppliers: suppliers(option.bill, currency),
         shed: option.bill.lines.iter().filter(|line| line.on_hand > Decimal::ZERO).map(shed_row).collect(),
         reels: reels(option),
-        hints: option.bill.hints.clone(),
         currency: currency.to_string(),
         invented: option.bill.lines.iter().any(|line| show::is_invented(line, input.catalogue)),
     }
 }
 
 /// The parts without a price.
-pub(super) fn missing(option: &OptionInput<'_>) -> Vec<Missing> {
+pub(super) fn missing(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<Missing> {
+    let words = |part: &str| input.catalogue.parts.get(part).map_or("–", |part| part.description.as_str());
     let rows = option.bill.unpriced.iter().map(|unpriced| Missing {
         part: unpriced.part.clone(),
+        description: words(&unpriced.part).to_owned(),
         quantity: show::quantity(unpriced.quantity, &unpriced.unit),
         why: unpriced.why.clone(),
     });
@@ -99,9 +100,9 @@ pub(super) fn missing(option: &OptionInput<'_>) -> Vec<Missing> {
 }
 
 /// What is bought, by supplier slot; offers without a slot come last.
-fn suppliers(lines: &[BillLine], currency: &Currency) -> Vec<Supplier> {
+fn suppliers(bill: &Bill, currency: &Currency) -> Vec<Supplier> {
     let mut slots: BTreeMap<(bool, &str), Vec<&BillLine>> = BTreeMap::new();
-    for line in lines.iter().filter(|line| line.offer.is_some() && line.packs > 0) {
+    for line in bill.lines.iter().filter(|line| line.offer.is_some() && line.packs > 0) {
         slots.entry((line.supplier.is_empty(), line.supplier.as_str())).or_default().push(line);
     }
     slots
@@ -111,12 +112,12 @@ fn suppliers(lines: &[BillLine], currency: &Currency) -> Vec<Supplier> {
             amount: show::money(lines.iter().filter_map(|line| line.amount).sum::<Money>(), currency),
             complete: lines.iter().all(|line| line.amount.is_some()),
             longest_lead: lines.iter().filter_map(|line| line.lead_days).max(),
-            lines: lines.into_iter().map(|line| row(line, currency)).collect(),
+            lines: lines.into_iter().map(|line| row(line, &bill.cut_plans, currency)).collect(),
         })
         .collect()
 }
 
-fn row(line: &BillLine, currency: &Currency) -> Row {
+fn row(line: &BillLine, plans: &[PartCutPlan], currency: &Currency) -> Row {
     let price = |money: Option<Money>| {
         money.map_or_else(|| "unpriced".to_owned(), |money| show::money(money, currency))
     };
@@ -133,7 +134,7 @@ fn row(line: &BillLine, currency: &Currency) -> Row {
         packs: line.packs.to_string(),
         pack: show::quantity(line.pack, &line.unit),
         bought: show::quantity(line.bought, &line.unit),
-        left: show::quantity(line.left, &line.unit),
+        left: show::left(line, plans),
         pack_price: price(line.pack_price),
         amount: price(line.amount),
         priced_on: show::or_dash(&line.priced_on),
@@ -159,7 +160,7 @@ fn reels(option: &OptionInput<'_>) -> Vec<Reel> {
                 part: plan.part.clone(),
                 name: reel_name(n + 1, reel),
                 length: show::metres(reel.length),
-                pieces: show::names(reel.cuts.iter().map(|cut| cut.label.as_str())),
+                pieces: show::names(show::sorted(reel.cuts.iter().map(|cut| cut.label.as_str()))),
                 left: show::metres(reel.left),
             });
         }

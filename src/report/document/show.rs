@@ -3,7 +3,9 @@
 use rust_decimal::Decimal;
 
 use crate::catalogue::{Catalogue, Source};
-use crate::pricing::BillLine;
+use crate::cutting::ReelSource;
+use crate::pricing::{BillLine, PartCutPlan};
+use crate::takeoff::PieceRole;
 use crate::units::{Angle, Bearing, Currency, Length, Money, VelocityFactor};
 
 /// Metres without unit: two decimals, three where the millimetre matters.
@@ -76,6 +78,40 @@ fn numbered(name: &str) -> Option<(&str, u32)> {
     name[stem.len()..].parse().ok().map(|n| (stem, n))
 }
 
+/// Names with their numbers in counting order: "V1-R2" before "V1-R10".
+pub(super) fn sorted<'a>(list: impl IntoIterator<Item = &'a str>) -> Vec<&'a str> {
+    let mut list: Vec<&str> = list.into_iter().collect();
+    list.sort_by_cached_key(|name| chunks(name));
+    list
+}
+
+/// A name cut into text and numbers.
+fn chunks(name: &str) -> Vec<(String, u64)> {
+    let pieces = name.split_inclusive(|c: char| !c.is_ascii_digit());
+    let mut out: Vec<(String, u64)> = Vec::new();
+    for piece in pieces {
+        let digits = piece.len() - piece.trim_start_matches(|c: char| c.is_ascii_digit()).len();
+        out.push((String::new(), piece[..digits].parse().unwrap_or(0)));
+        out.push((piece[digits..].to_owned(), 0));
+    }
+    out
+}
+
+/// The word of a role as a sheet prints it.
+pub(super) fn role(role: PieceRole) -> String {
+    role.word().replace('-', " ")
+}
+
+/// What is left of what is bought: of cut goods what the cutting plan leaves, because the saw takes its share.
+pub(super) fn left(line: &BillLine, plans: &[PartCutPlan]) -> String {
+    let Some(plan) = plans.iter().find(|plan| plan.part == line.part) else {
+        return quantity(line.left, &line.unit);
+    };
+    let bought = plan.plan.reels.iter().filter(|reel| matches!(reel.source, ReelSource::Bought(_)));
+    let left: Length = bought.map(|reel| reel.left).sum();
+    format!("{} m", metres(left))
+}
+
 /// The text, or a dash where there is none.
 pub(super) fn or_dash(text: &str) -> String {
     if text.is_empty() { "–".to_owned() } else { text.to_owned() }
@@ -100,6 +136,15 @@ mod tests {
     fn runs_of_names_are_drawn_together() {
         assert_eq!(names(["W1-P1", "W1-P2", "W1-P3", "W2-P1", "W2-P2"]), "W1-P1 to W1-P3, W2-P1, W2-P2");
         assert_eq!(names(["RX"]), "RX");
+    }
+
+    #[test]
+    fn names_are_counted_not_spelt() {
+        assert_eq!(
+            names(sorted(["V1-R1", "V1-R10", "V1-R2", "V1-R3", "V1-R9"])),
+            "V1-R1 to V1-R3, V1-R9, V1-R10"
+        );
+        assert_eq!(sorted(["D10", "D2", "C-M1", "B1"]), ["B1", "C-M1", "D2", "D10"]);
     }
 
     #[test]

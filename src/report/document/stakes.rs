@@ -29,6 +29,8 @@ struct ArrayStakes {
 struct Row {
     name: String,
     what: String,
+    /// Another stake on the same place; empty where there is none.
+    same: String,
     east: String,
     north: String,
     datum: Leg,
@@ -61,12 +63,13 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
         let layout = &array.plan.layout;
         let mut rows = Vec::new();
         let mut previous: Option<&Point> = None;
-        for point in walk(layout) {
+        let (here, away): (Vec<&Point>, Vec<&Point>) = walk(layout).into_iter().partition(|p| on_datum(p));
+        for point in here.into_iter().chain(away) {
             if seen.contains(&point.name.as_str()) {
                 continue;
             }
             seen.push(&point.name);
-            rows.push(row(input, point, previous));
+            rows.push(row(input, point, previous, same_place(layout, point)));
             previous = Some(point);
         }
         arrays.push(ArrayStakes {
@@ -105,17 +108,33 @@ fn walk(layout: &Layout) -> Vec<&Point> {
     there_and_back.chain(layout.points.iter().filter(|point| point.kind == PointKind::Receiver)).collect()
 }
 
+/// Whether a stake stands on the datum itself: then it is the first to be set.
+fn on_datum(point: &Point) -> bool {
+    point.site.distance_m(SitePosition::default()) < 0.005
+}
+
 /// The stake that stands on the datum, if one does.
 fn datum(option: &OptionInput<'_>) -> String {
     let mut points = option.design.arrays.iter().flat_map(|array| &array.plan.layout.points);
-    let here = points.find(|point| point.site.distance_m(SitePosition::default()) < 0.005);
+    let here = points.find(|point| on_datum(point));
     here.map(|point| point.name.clone()).unwrap_or_default()
 }
 
-fn row(input: &Input<'_>, point: &Point, previous: Option<&Point>) -> Row {
+/// The name of an element's stake that a hub shares.
+fn same_place(layout: &Layout, point: &Point) -> String {
+    let shared = layout.points.iter().find(|other| {
+        point.kind == PointKind::Hub
+            && other.kind != PointKind::Hub
+            && point.site.distance_m(other.site) < 0.005
+    });
+    shared.map(|other| other.name.clone()).unwrap_or_default()
+}
+
+fn row(input: &Input<'_>, point: &Point, previous: Option<&Point>, same: String) -> Row {
     Row {
         name: point.name.clone(),
         what: what(point),
+        same,
         east: show::tape(point.site.east_m()),
         north: show::tape(point.site.north_m()),
         datum: leg(input, SitePosition::default(), point.site),
@@ -180,9 +199,22 @@ fn checks(layout: &Layout) -> Vec<Check> {
     }
     let hubs = layout.points.iter().filter(|point| point.kind == PointKind::Hub);
     for hub in hubs.take(4) {
-        rows.extend((0..elements.len().min(6)).map(|n| check(hub, feed(n))));
+        rows.extend(around(hub, &elements.iter().map(|e| layout.point(e.feed_point)).collect::<Vec<_>>()));
     }
     rows
+}
+
+/// From a hub to the elements round it: the nearest, and those not half as far again; a far one proves nothing more.
+fn around(hub: &Point, feeds: &[&Point]) -> Vec<Check> {
+    let metres = |feed: &Point| hub.site.distance_m(feed.site);
+    let apart: Vec<&Point> = feeds.iter().copied().filter(|feed| metres(feed) >= 0.05).collect();
+    let nearest = apart.iter().map(|feed| metres(feed)).fold(f64::INFINITY, f64::min);
+    apart
+        .into_iter()
+        .filter(|feed| metres(feed) <= 1.5 * nearest)
+        .take(8)
+        .map(|feed| check(hub, feed))
+        .collect()
 }
 
 /// Within 0.2 % of the distance, at least 0.05 m (common practice, no source).

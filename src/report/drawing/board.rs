@@ -36,10 +36,22 @@ impl Board {
         self.write(label, kind, lines);
     }
 
-    /// A text that belongs to no single place: it needs no line to it.
-    pub(super) fn note(&mut self, at: Paper, nearest: f64, kind: Type, text: &str) {
-        if let Some(label) = self.taken.text(at, nearest, kind, &[text]) {
-            self.write(label, kind, &[text]);
+    /// A text that belongs to no single place: in a corner that is free, or at least free of signs and texts.
+    pub(super) fn corner_note(&mut self, kind: Type, text: &str) {
+        let (wide, high) = (kind.width(text), kind.leading());
+        let (right, low) = (self.area.right - wide - 1.5, self.area.bottom - high - 1.0);
+        let (left, top) = (self.area.left + 1.5, self.area.top + 1.0);
+        let rows = |at: f64| [at, if at > top { at - high } else { at + high }];
+        let corners = [left, right]
+            .into_iter()
+            .flat_map(|x| [rows(low), rows(top)].into_iter().flatten().map(move |y| (x, y)));
+        let rect = |(x, y): Paper| Rect { left: x, top: y, right: x + wide, bottom: y + high };
+        let all: Vec<Rect> = corners.map(rect).collect();
+        let free = all.iter().find(|rect| self.taken.is_free(**rect));
+        let clear = || all.iter().find(|rect| self.taken.clear_of_rects(**rect));
+        if let Some(rect) = free.or_else(clear) {
+            self.taken.rect(*rect);
+            self.svg.text((rect.left, rect.bottom - 0.25 * kind.size), kind.haloed(), text);
         }
     }
 

@@ -85,7 +85,8 @@ impl Taken {
         self.clear_of_rects(rect) && !self.lines.iter().any(|(a, b)| rect.clip(*a, *b).is_some())
     }
 
-    fn clear_of_rects(&self, rect: Rect) -> bool {
+    /// Whether no sign or text is there.
+    pub(super) fn clear_of_rects(&self, rect: Rect) -> bool {
         self.area.holds(rect) && !self.rects.iter().any(|taken| taken.meets(rect))
     }
 

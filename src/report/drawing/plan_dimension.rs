@@ -16,16 +16,48 @@ pub(super) fn draw_dimensions(board: &mut Board, design: &Design) {
             let name = &plan.layout.elements[span.element.0].name;
             let (a, b) = (plan.layout.point(span.from).site, plan.layout.point(span.to).site);
             let (a, b) = (board.ground.paper(a), board.ground.paper(b));
-            let at = (a.0 + 0.62 * (b.0 - a.0), a.1 + 0.62 * (b.1 - a.1));
+            let at = between(a, b, 0.62);
             let words = format!("{name}: {}", span.length);
             if kind.width(&words) < apart(a, b) {
-                let lift =
-                    if more_room_below(board, plan, (a, b), at) { -1.2 - 0.75 * kind.size } else { 1.2 };
-                board.svg.turned_text(at, angle(a, b), lift, kind, &words);
+                let below = more_room_below(board, plan, (a, b), at);
+                along_wire(board, (a, b), below, kind, &words);
             }
         }
         neighbours(board, plan, middle);
     }
+}
+
+fn between(a: Paper, b: Paper, share: f64) -> Paper {
+    (a.0 + share * (b.0 - a.0), a.1 + share * (b.1 - a.1))
+}
+
+/// A text along a wire where nothing else is: near it before farther off, the roomier side before the other.
+fn along_wire(board: &mut Board, (a, b): (Paper, Paper), below: bool, kind: Type, words: &str) {
+    let (nx, ny) = normal(a, b);
+    let down = if ny > 0.0 { 1.0 } else { -1.0 };
+    let roomy = if below { 1.0 } else { -1.0 };
+    let half = 0.5 * kind.width(words) / apart(a, b);
+    let spots = [1.0, -1.0].into_iter().flat_map(|side| {
+        [1.2, 2.4]
+            .into_iter()
+            .flat_map(move |gap| [0.62, 0.5, 0.72, 0.38].map(|share| (side * roomy, gap, share)))
+    });
+    // Small boxes along the middle of the text stand for it, as it is turned.
+    let boxes = |(side, gap, share): (f64, f64, f64)| {
+        let off = side * down * (gap + 0.375 * kind.size);
+        [-1.0, -0.75, -0.5, -0.25, 0.0, 0.25, 0.5, 0.75, 1.0].map(|part| {
+            let at = between(a, b, share + part * half);
+            Rect::about((at.0 + off * nx, at.1 + off * ny), 1.1, 1.1)
+        })
+    };
+    let free = |spot: &(f64, f64, f64)| boxes(*spot).into_iter().all(|rect| board.taken.is_free(rect));
+    let spot = spots.clone().find(free).unwrap_or((roomy, 1.2, 0.62));
+    for rect in boxes(spot) {
+        board.taken.rect(rect);
+    }
+    let (side, gap, share) = spot;
+    let lift = if side > 0.0 { -gap - 0.75 * kind.size } else { gap };
+    board.svg.turned_text(between(a, b, share), angle(a, b), lift, kind, words);
 }
 
 /// Whether the nearest other wire is farther off on the lower side of a wire than on its upper side.

@@ -35,7 +35,8 @@ impl Stroke {
     pub(super) fn draw(self, svg: &mut Svg, a: Point, b: Point) {
         match self {
             Self::Wire => svg.line(a, b, 0.7, ""),
-            Self::Branch => svg.line(a, b, 0.5, "3 1.1"),
+            // Dashes are counted from the hub: branches on one line then lie in step and stay dashed.
+            Self::Branch => svg.line(b, a, 0.5, "3 1.1"),
             Self::Main => {
                 svg.line(a, b, 1.5, "");
                 let d = format!("M{} {}L{} {}", num(a.0), num(a.1), num(b.0), num(b.1));

@@ -38,8 +38,8 @@ pub fn draw(project: &Project, design: &Design, control: ControlCable) -> String
     let mut board = Board { svg, taken: Taken::new(AREA), ground: scene.ground, area: AREA };
     draw_land(&mut board, project);
     draw_lines(&mut board, design, control);
-    draw_dimensions(&mut board, design);
     scene.draw_signs(&mut board);
+    draw_dimensions(&mut board, design);
     draw_north(&mut board.svg, &mut board.taken, AREA, project.site.declination);
     for array in &design.arrays {
         draw_beam(&mut board, &array.plan, project.site.declination);
@@ -242,16 +242,20 @@ fn draw_line_names(board: &mut Board, design: &Design, receiver_on_plan: bool) {
     }
 }
 
-/// The first crowd of signs once more, larger, under the key.
+/// The largest crowd of signs once more, larger, under the key.
 fn draw_detail(mut svg: Svg, scene: &Scene<'_>, design: &Design, foot: f64) -> Svg {
     let area = Rect { left: COLUMN, top: foot + 4.0, right: SHEET.0 - 0.5, bottom: 133.0 };
     let crowded = scene.points.iter().filter(|p| p.kind != PointKind::Post && scene.crowded(p));
-    let found = crowded.map(|first| crowd_of(scene, first)).find_map(|members| {
+    let found = crowded.map(|first| crowd_of(scene, first)).filter_map(|members| {
         let places: Vec<SitePosition> = members.iter().map(|point| point.site).collect();
         let apart = places.iter().any(|place| place.distance_m(places[0]) > 1.0);
-        let ground = Ground::fitting(&places, area, 9.0);
+        // The foot of the frame is for the distances in words.
+        let inside = Rect { bottom: area.bottom - 5.0, ..area };
+        let ground = Ground::fitting(&places, inside, 9.0);
         (apart && ground.denominator <= 0.6 * scene.ground.denominator).then_some((members, ground))
     });
+    // Of equal crowds the first.
+    let found = found.reduce(|best, next| if next.0.len() > best.0.len() { next } else { best });
     let Some((members, ground)) = found.filter(|_| area.bottom - area.top >= 30.0) else { return svg };
     let title = format!("Close up, 1 : {:.0}", ground.denominator);
     svg.rect((area.left, area.top), (area.right - area.left, area.bottom - area.top), "none", 0.25);
@@ -267,11 +271,8 @@ fn draw_detail(mut svg: Svg, scene: &Scene<'_>, design: &Design, foot: f64) -> S
     }
     for (n, a) in members.iter().enumerate() {
         for b in members.iter().skip(n + 1).filter(|b| b.kind == a.kind && a.kind == PointKind::FeedPoint) {
-            let middle = ground.paper(a.site);
-            let other = ground.paper(b.site);
-            let middle = (f64::midpoint(middle.0, other.0), f64::midpoint(middle.1, other.1));
             let metres = Length::from_metres_nearest(a.site.distance_m(b.site));
-            board.note(middle, 3.0, Type::plain(3.2), &format!("{} to {}: {metres}", a.name, b.name));
+            board.corner_note(Type::plain(3.2), &format!("{} to {}: {metres}", a.name, b.name));
         }
     }
     board.svg

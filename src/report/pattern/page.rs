@@ -97,7 +97,7 @@ fn contents(view: &View<'_>) -> Page {
     }
     Page {
         title: view.project.title.clone(),
-        title_css: css(&view.project.title),
+        title_css: css(&shortened(&view.project.title)),
         hash: view.hash.to_owned(),
         date: view.project.estimated.to_string(),
         basis: words::basis(view.weighting),
@@ -216,6 +216,16 @@ fn page_table(table: Table) -> PageTable {
 }
 
 /// Text made safe inside a CSS string in double quotes.
+/// A title of more than 60 letters would run into the page number of the running head.
+fn shortened(title: &str) -> String {
+    const LONGEST: usize = 60;
+    if title.chars().count() <= LONGEST {
+        title.to_owned()
+    } else {
+        title.chars().take(LONGEST - 1).chain(['…']).collect()
+    }
+}
+
 fn css(text: &str) -> String {
     let mut out = String::with_capacity(text.len());
     for c in text.chars() {

@@ -2,14 +2,18 @@
 
 use rust_decimal::Decimal;
 
+use super::prepare::boxes_of;
 use super::step::{Block, Hold, Reading, Scene, Step, labels, runs, step};
 use crate::design::ArrayDesign;
 use crate::plan::ElementKind;
-use crate::project::{Termination, Terrain};
+use crate::project::{Termination, Terrain, VerticalKind};
 use crate::reception::Ends;
 use crate::report::document::show;
 use crate::takeoff::PieceRole;
 use crate::units::Length;
+
+/// What a kilogram on a spring balance weighs.
+const NEWTONS_A_KILOGRAM: f64 = 9.81;
 
 /// The blocks after the stakes.
 pub(super) fn blocks(scene: &Scene<'_>) -> Vec<Block> {
@@ -34,7 +38,7 @@ fn supports(scene: &Scene<'_>) -> Block {
             ("clear", "T05"),
             &["stake"],
             what,
-            "no felling in the nesting season; saws by trained people only",
+            "no felling in the nesting season; saws: trained people only",
         );
     }
     let mut some = |key, role: &str, what: &str, after, detail: &str| {
@@ -99,8 +103,9 @@ fn earth(scene: &Scene<'_>) -> Block {
     }
     let outdoors: Vec<&str> = scene.hubs().iter().map(|hub| hub.name.as_str()).collect();
     if !outdoors.is_empty() {
-        let what = format!("Drive the surge rod of {}", show::names(outdoors));
-        let detail = "at least 5 m from every antenna earth and never joined to it";
+        let each = if outdoors.len() > 1 { "a surge rod for each of" } else { "the surge rod of" };
+        let what = format!("Drive {each} {}", show::names(outdoors));
+        let detail = "5 m or more from every antenna earth, never joined to it";
         step(&mut steps, ("surge", "T15"), &["permit", "stake"], what, detail);
     }
     let sets: Vec<String> = scene
@@ -130,8 +135,10 @@ fn wires(scene: &Scene<'_>) -> Block {
         let practice = &scene.input.project.practice;
         let what = format!("Tension and tie off {}", labels(&wires));
         let detail = format!(
-            "{} when it is as warm as now; sag in a bay no more than {}",
-            practice.wire_tension, practice.max_sag
+            "pull to {}, about {:.0} kg on a spring balance; sag in a bay no more than {}",
+            practice.wire_tension,
+            practice.wire_tension.newtons() / NEWTONS_A_KILOGRAM,
+            practice.max_sag
         );
         step(&mut steps, ("tension", "T13"), &["hang"], what, detail);
     }
@@ -141,12 +148,12 @@ fn wires(scene: &Scene<'_>) -> Block {
 fn boxes(scene: &Scene<'_>) -> Block {
     let mut steps = Vec::new();
     if let Some((count, places)) = scene.places("feed-box") {
-        let what = format!("Mount {count} feed boxes: {places}");
+        let what = format!("Mount {}: {places}", boxes_of(count, "feed"));
         let detail = "coax shield is not joined to the antenna earth";
         step(&mut steps, ("feed", "T17"), &["feed-bench", "end-post", "mast", "rod"], what, detail);
     }
     if let Some((count, places)) = scene.places("termination-box") {
-        let what = format!("Mount {count} termination boxes: {places}");
+        let what = format!("Mount {}: {places}", boxes_of(count, "termination"));
         step(
             &mut steps,
             ("termination", "T18"),
@@ -217,7 +224,7 @@ fn cables(scene: &Scene<'_>) -> Block {
             ("delay", "T22"),
             &["trim", "hub"],
             what,
-            "in the other leg the array listens backwards",
+            "in the wrong leg the array listens backwards",
         );
     }
     let rule = "Test before sealing. Nothing is buried or taped before every line below is filled in.";
@@ -235,26 +242,29 @@ fn element_readings(scene: &Scene<'_>) -> Vec<Reading> {
         match &element.kind {
             ElementKind::Wire(wire) => {
                 readings.push(Reading::new(
-                    format!("{name}: wire lifted from the box, wire to earth, ohm"),
+                    format!("{name}: wire lifted from the feed box, wire to earth, ohm"),
                     loop_resistance(array, wire.termination),
                 ));
                 readings
                     .push(Reading::new(format!("{name}: across the socket of the feed box, ohm"), "under 1"));
             }
-            ElementKind::Vertical(_) => {
-                readings.push(Reading::new(
-                    format!("{name}: supply or resonance at the base"),
-                    "as on the bench",
-                ));
+            ElementKind::Vertical(foot) => {
+                let (what, good) = match foot.kind {
+                    VerticalKind::Active => ("supply at the amplifier, V", "as on the bench; polarity right"),
+                    VerticalKind::Passive => {
+                        ("resonance at the base, MHz; resistance, ohm", "as on the bench")
+                    }
+                };
+                readings.push(Reading::new(format!("{name}: {what}"), good));
             }
         }
     }
     for piece in scene.laid() {
         let what = format!("{}: far end open; far end shorted, ohm", piece.label);
         let good = if piece.match_group.is_empty() {
-            "open: no reading; shorted: a few ohms".to_owned()
+            "open: none; shorted: write down".to_owned()
         } else {
-            format!("open: no reading; shorted: the same as the others of group {}", piece.match_group)
+            format!("open: none; shorted: as all of group {}", piece.match_group)
         };
         readings.push(Reading::new(what, good));
     }
@@ -274,9 +284,9 @@ fn loop_resistance(array: &ArrayDesign, termination: Termination) -> String {
     match built {
         Some((resistor, earth)) => {
             let sum = resistor.ohms() + 2.0 * earth.ohms();
-            format!("{resistor} and both earths as read above, ± 20 %; {sum:.0} if these are as computed")
+            format!("{resistor} and both earths as read, ±\u{a0}20\u{a0}%; {sum:.0} if these are as computed")
         }
-        None => "the termination resistor and both earths as read above, ± 20 %".to_owned(),
+        None => "the termination resistor and both earths as read, ±\u{a0}20\u{a0}%".to_owned(),
     }
 }
 
@@ -289,10 +299,26 @@ fn close(scene: &Scene<'_>) -> Block {
         "Go through the readings above with the leader".to_owned(),
         "outside the range: stop and look for the cause",
     );
+    let laid = scene.laid();
+    if !laid.is_empty() {
+        let (mains, inner): (Vec<_>, Vec<_>) =
+            laid.into_iter().partition(|piece| piece.role == PieceRole::Main);
+        let at = |pieces: &[_], end: &str| (!pieces.is_empty()).then(|| format!("{} {end}", labels(pieces)));
+        let words = [at(&inner, "at both ends"), at(&mains, "at the field end only")];
+        let words: Vec<String> = words.into_iter().flatten().collect();
+        let what = format!("Connect {}, by the labels", words.join(", "));
+        step(
+            &mut steps,
+            ("join", "T22"),
+            &["test", "hub"],
+            what,
+            "clean and dry; hand-tight, then snug with a spanner",
+        );
+    }
     step(
         &mut steps,
         ("seal", "T30"),
-        &["test"],
+        &["test", "join"],
         "Seal every joint outdoors".to_owned(),
         "stretch tape, cover tape, tie; drain holes stay open",
     );
@@ -312,7 +338,7 @@ fn station(scene: &Scene<'_>) -> Block {
     let mut steps = Vec::new();
     let mains = scene.pieces(PieceRole::Main);
     let what = "Mount the entry panel: arresters, surge rod, bond to the building's electrodes".to_owned();
-    let detail = "a licensed person where the law says so; local code decides the conductor";
+    let detail = "a licensed person where the law says so; local code first";
     step(&mut steps, ("entry", "T40"), &["permit"], what, detail);
     let readings = vec![
         Reading::new("entry bonded to the building's electrodes", "yes; name of who did it"),
@@ -328,7 +354,7 @@ fn first_signal(scene: &Scene<'_>) -> Block {
     let mut steps = Vec::new();
     let mains = scene.pieces(PieceRole::Main);
     let what = format!("Connect {} to the entry panel", labels(&mains));
-    step(&mut steps, ("connect", "T40"), &["entry", "test"], what, "");
+    step(&mut steps, ("connect", "T40"), &["entry", "join"], what, "");
     let bearings: Vec<String> = scene
         .option
         .design

@@ -1,5 +1,7 @@
 //! Everything before the field: permission, bench, stakes.
 
+use rust_decimal::Decimal;
+
 use super::join::joined;
 use super::step::{Block, Hold, Reading, Scene, Step, labels, step};
 use crate::report::document::show;
@@ -12,9 +14,9 @@ pub(super) fn blocks(scene: &Scene<'_>) -> Vec<Block> {
 
 fn permission(scene: &Scene<'_>) -> Block {
     let mut steps = Vec::new();
-    let detail = "access, hazards, stock, where to park; write the answers below";
+    let detail = "access, hazards, stock, parking; the answers go below";
     step(&mut steps, ("walk", "T01"), &[], "Walk the site".to_owned(), detail);
-    let detail = "owner's consent in writing; search for buried services, wait for every reply";
+    let detail = "owner's consent in writing; wait for every reply of the search";
     step(
         &mut steps,
         ("permit", "T02"),
@@ -33,6 +35,10 @@ fn permission(scene: &Scene<'_>) -> Block {
             "10 m or more from every antenna earth",
         ),
         Reading::new("buried services? reference number", "all replies in, marks on the ground"),
+        Reading::new(
+            "transmitters on the site locked off? who holds the key",
+            "locked off on every visit, until everyone has left the array",
+        ),
     ];
     if !crossings.is_empty() {
         let good = "height or conduit agreed with the owner";
@@ -46,27 +52,34 @@ fn bench(scene: &Scene<'_>) -> Block {
     let mut steps = Vec::new();
     cables(scene, &mut steps);
     boxes(scene, &mut steps);
-    let detail = "labels at both ends, 0.2 m from the plug; one bag a stake";
-    step(&mut steps, ("kit", "T39"), &["cut"], "Make labels and pack for the field".to_owned(), detail);
+    let detail = "one bag a stake, named like it; labels at both ends of a cable";
+    step(
+        &mut steps,
+        ("kit", "T39"),
+        &["plug-bench", "feed-bench", "hub-bench"],
+        "Pack for the field".to_owned(),
+        detail,
+    );
     Block { title: "At the bench", steps, hold: None }
 }
 
 fn cables(scene: &Scene<'_>, steps: &mut Vec<Step>) {
     let delays = scene.pieces(PieceRole::Delay);
     if !delays.is_empty() {
-        let detail =
-            "a sample of 20 m or more of the same reel, far end open; compare with the cut list, sheet cuts";
+        let detail = "sheet cuts names the piece; if it differs, print the cut list anew";
         let what = format!("Measure the velocity factor of the reel for {}", labels(&delays));
         step(steps, ("velocity", "T31"), &[], what, detail);
     }
+    let what = "Print and cut the labels".to_owned();
+    step(steps, ("label", "T39"), &[], what, "sheet labels: two a cable, one a box");
     let pieces = scene.option.takeoff.pieces.len();
     let what = format!("Cut {} by the cut list", show::count(pieces, "piece", "pieces"));
     step(
         steps,
         ("cut", "T33"),
-        &["velocity"],
+        &["velocity", "label"],
         what,
-        "mark every cut before the first; label both ends first",
+        "mark every cut before the first; label both ends at the bench",
     );
     if !delays.is_empty() {
         let what = format!("Trim {} to the electrical length", labels(&delays));
@@ -80,14 +93,39 @@ fn cables(scene: &Scene<'_>, steps: &mut Vec<Step>) {
     }
 }
 
+/// What a hub box may hold, in words.
+const HUB_PARTS: [(&str, &str); 5] = [
+    ("hybrid-2way", "two-way hybrid"),
+    ("hybrid-3way", "three-way hybrid"),
+    ("inverter", "inverter"),
+    ("pad", "pad"),
+    ("amplifier", "amplifier"),
+];
+
+/// "1 hub box", "3 feed boxes".
+pub(super) fn boxes_of(count: Decimal, kind: &str) -> String {
+    if count == Decimal::ONE { format!("1 {kind} box") } else { format!("{count} {kind} boxes") }
+}
+
+/// Which feed boxes hold an amplifier.
+fn amplified(scene: &Scene<'_>) -> String {
+    let hubs = scene.hubs();
+    let all = scene.named("amplifier");
+    let away: Vec<&str> = all.into_iter().filter(|name| !hubs.iter().any(|hub| hub.name == *name)).collect();
+    if away.is_empty() { String::new() } else { format!("; amplifier in {}", show::names(away)) }
+}
+
 fn boxes(scene: &Scene<'_>, steps: &mut Vec<Step>) {
     if let Some((count, places)) = scene.places("feed-box") {
-        let what = format!("Build and test {count} feed boxes: {places}");
-        let detail = "all wound and connected in the same sense: compare each with the first, ± 1°";
+        let what = format!("Build and test {}: {places}", boxes_of(count, "feed"));
+        let detail = format!(
+            "all wound and connected in the same sense: compare each with the first, ±\u{a0}1°{}",
+            amplified(scene)
+        );
         step(steps, ("feed-bench", "T34"), &[], what, detail);
     }
     if let Some((count, places)) = scene.places("termination-box") {
-        let what = format!("Build and test {count} termination boxes: {places}");
+        let what = format!("Build and test {}: {places}", boxes_of(count, "termination"));
         let resistors = scene.terminations().join("; ");
         let detail = format!("{resistors}; read the resistor before the lid goes on");
         step(steps, ("termination-bench", "T35"), &[], what, detail);
@@ -97,11 +135,11 @@ fn boxes(scene: &Scene<'_>, steps: &mut Vec<Step>) {
         step(steps, ("choke-bench", "T38"), &[], what, format!("for {places}"));
     }
     if let Some((count, places)) = scene.places("hub-box") {
-        let inside: Vec<String> = ["hybrid-2way", "hybrid-3way", "inverter", "pad", "amplifier"]
+        let inside: Vec<String> = HUB_PARTS
             .into_iter()
-            .filter_map(|role| scene.places(role).map(|(n, at)| format!("{n} × {role} ({at})")))
+            .filter_map(|(role, words)| scene.hub_places(role).map(|(n, at)| format!("{n} × {words} ({at})")))
             .collect();
-        let what = format!("Build and test {count} hub boxes: {places}");
+        let what = format!("Build and test {}: {places}", boxes_of(count, "hub"));
         let mut detail =
             if inside.is_empty() { String::new() } else { format!("inside: {}; ", inside.join(", ")) };
         let arrays = scene.option.design.arrays.iter().map(|array| &array.plan);

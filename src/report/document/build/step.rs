@@ -78,8 +78,26 @@ impl<'a> Scene<'a> {
     /// How many of a role, and where they stand.
     pub(super) fn places(&self, role: &str) -> Option<(Decimal, String)> {
         let count = self.count(role);
+        (count > Decimal::ZERO).then(|| (count, show::names(self.named(role))))
+    }
+
+    /// The places of a role in the order of the layout.
+    pub(super) fn named(&self, role: &str) -> Vec<&'a str> {
         let items = self.option.takeoff.items.iter().filter(|item| item.role == role);
         let names: Vec<&str> = items.flat_map(|item| item.places.keys()).map(String::as_str).collect();
+        self.in_layout_order(&names)
+    }
+
+    /// How many of a role stand in hub boxes, and in which.
+    pub(super) fn hub_places(&self, role: &str) -> Option<(Decimal, String)> {
+        let hubs: Vec<&str> = self.hubs().iter().map(|hub| hub.name.as_str()).collect();
+        let items = self.option.takeoff.items.iter().filter(|item| item.role == role);
+        let inside: Vec<(&str, Decimal)> = items
+            .flat_map(|item| item.places.iter().map(|(name, n)| (name.as_str(), *n)))
+            .filter(|(name, _)| hubs.contains(name))
+            .collect();
+        let names: Vec<&str> = inside.iter().map(|(name, _)| *name).collect();
+        let count: Decimal = inside.iter().map(|(_, n)| *n).sum();
         (count > Decimal::ZERO).then(|| (count, show::names(self.in_layout_order(&names))))
     }
 
