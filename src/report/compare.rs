@@ -141,7 +141,7 @@ fn radio_rows(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayRep
     rows
 }
 
-fn tenths(value: f64) -> Decimal {
+pub(in crate::report) fn tenths(value: f64) -> Decimal {
     Decimal::from_f64_retain(value).unwrap_or_default().round_dp(1)
 }
 
@@ -155,19 +155,30 @@ fn cost_per_decibel(project: &Project, results: &[OptionResult], heard: &[Vec<Ar
         let figures = figures(&results[n], &heard[n], project.frequency)?;
         Some(tenths(figures.report.directivity.rdf_db))
     };
-    let cheapest = (0..results.len()).min_by_key(|n| results[*n].bill.total);
-    let value = |n: usize| {
-        let base = cheapest?;
-        let better = rdf(n)? - rdf(base)?;
-        let dearer = results[n].bill.total - results[base].bill.total;
-        (n != base && better > Decimal::ZERO)
-            .then(|| Cell::Money(Money::new(dearer.amount() / better).rounded(&project.currency).to_string()))
+    let totals: Vec<Money> = results.iter().map(|result| result.bill.total).collect();
+    let heard: Vec<Option<Decimal>> = (0..results.len()).map(rdf).collect();
+    let costs = decibel_costs(&totals, &heard);
+    let cell = |cost: &Option<Money>| {
+        cost.map_or(Cell::None, |cost| Cell::Money(cost.rounded(&project.currency).to_string()))
     };
     Row {
         name: format!("cost of a dB of RDF above the cheapest, at {}", project.frequency),
         unit: format!("{}/dB", project.currency),
-        values: (0..results.len()).map(|n| value(n).unwrap_or(Cell::None)).collect(),
+        values: costs.iter().map(cell).collect(),
     }
+}
+
+/// For each option the money for each dB of RDF above the cheapest one; nothing for the cheapest and for those that hear no
+/// better.
+pub(in crate::report) fn decibel_costs(totals: &[Money], rdf: &[Option<Decimal>]) -> Vec<Option<Money>> {
+    let cheapest = (0..totals.len()).min_by_key(|n| totals[*n]);
+    let cost = |n: usize| {
+        let base = cheapest?;
+        let better = rdf[n]? - rdf[base]?;
+        let dearer = totals[n] - totals[base];
+        (n != base && better > Decimal::ZERO).then(|| Money::new(dearer.amount() / better))
+    };
+    (0..totals.len()).map(cost).collect()
 }
 
 fn money_rows(project: &Project, results: &[OptionResult]) -> Vec<Row> {

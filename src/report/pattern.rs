@@ -17,6 +17,7 @@ use crate::project::Project;
 use crate::radio::{AtElevation, DelayCurve, Quantiles};
 use crate::reception::{self, ArrayReport, DirectionReport, Figures, FrequencyReport, Noise, Weighting};
 
+pub(in crate::report) use page::contents;
 pub use page::page;
 pub use sheet::sheet;
 

@@ -39,6 +39,8 @@ const TEMPLATES: &[(&str, &str)] = templates![
     "estimate.md",
     "labels.html",
     "labels.md",
+    "pattern.html",
+    "pattern.md",
 ];
 
 /// The names of the templates that can be overridden.

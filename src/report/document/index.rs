@@ -5,7 +5,11 @@ use std::collections::BTreeSet;
 use serde::Serialize;
 
 use super::sheet::{Paper, Sheet};
-use super::{Input, OptionInput, purchase, show};
+use super::{Input, OptionInput, pattern, purchase, show};
+use crate::radio::FRONT_TO_BACK_CEILING_DB;
+use crate::reception::{ArrayReport, Figures};
+use crate::report::compare::{decibel_costs, tenths};
+use crate::units::{Frequency, Money};
 
 /// The index of one option.
 #[derive(Debug, Serialize)]
@@ -24,6 +28,7 @@ struct ArrayRow {
     listens: String,
     elements: String,
     places: String,
+    hears: String,
 }
 
 #[derive(Debug, Serialize)]
@@ -46,6 +51,7 @@ struct SheetRow {
 pub(super) struct WholeView {
     options: Vec<OptionRow>,
     currency: String,
+    frequency: String,
     complete: bool,
 }
 
@@ -56,6 +62,8 @@ struct OptionRow {
     arrays: String,
     total: String,
     unpriced: usize,
+    hears: String,
+    decibel_cost: String,
 }
 
 /// The view of one option's index.
@@ -68,7 +76,7 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
     View {
         unpriced: purchase::missing(input, option),
         unplaced: super::cuts::unplaced(option),
-        arrays: arrays(option),
+        arrays: arrays(input, option),
         sheets: sheets.map(|(n, sheet)| sheet_row(n + 1, sheet)).collect(),
         frequencies: frequencies(input),
         totals: vec![
@@ -102,8 +110,9 @@ pub(super) fn frequencies(input: &Input<'_>) -> String {
     if also.is_empty() { design } else { format!("{design}, also {}", also.join(", ")) }
 }
 
-fn arrays(option: &OptionInput<'_>) -> Vec<ArrayRow> {
-    let rows = option.design.arrays.iter().map(|array| {
+fn arrays(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<ArrayRow> {
+    let reports = pattern::reports(input, option);
+    let rows = option.design.arrays.iter().zip(&reports).map(|(array, report)| {
         let layout = &array.plan.layout;
         let names: Vec<&str> = layout.elements.iter().map(|element| element.name.as_str()).collect();
         let bearings: Vec<String> =
@@ -113,24 +122,65 @@ fn arrays(option: &OptionInput<'_>) -> Vec<ArrayRow> {
             listens: bearings.join(", "),
             elements: names.len().to_string(),
             places: show::names(names),
+            hears: hears(report, input.project.frequency),
         }
     });
     rows.collect()
 }
 
-/// The view of the index over all options.
+/// "RDF 12.0 dB at 29° elevation, worst rear −14.4 dB, front to back 22 dB, beam 68°": the first direction at the design
+/// frequency.
+fn hears(report: &ArrayReport, frequency: Frequency) -> String {
+    let Some(figures) = heard(report, frequency) else { return "not computed".to_owned() };
+    let d = &figures.report.directivity;
+    let back = if d.front_to_back_db > FRONT_TO_BACK_CEILING_DB {
+        format!("> {FRONT_TO_BACK_CEILING_DB}")
+    } else {
+        format!("{:.0}", d.front_to_back_db)
+    };
+    let limits = if figures.report.validity.valid { "" } else { "; outside the limits of the method" };
+    format!(
+        "RDF {:.1} dB at {:.0}° elevation, worst rear lobe {:.1} dB, front to back {back} dB, beam {:.0}°{limits}",
+        d.rdf_db, d.peak_elevation_deg, d.worst_rear.level_db, d.beamwidth_deg
+    )
+}
+
+fn heard(report: &ArrayReport, frequency: Frequency) -> Option<&Figures> {
+    let direction = report.directions.first()?;
+    direction.frequencies.iter().find(|at| at.frequency == frequency)?.figures.as_ref().ok()
+}
+
+/// The view of the index over all options, each judged by its own first array.
 pub(super) fn whole(input: &Input<'_>, folders: &[String]) -> WholeView {
-    let currency = &input.project.currency;
-    let rows = input.options.iter().zip(folders).map(|(option, folder)| OptionRow {
+    let (currency, frequency) = (&input.project.currency, input.project.frequency);
+    let judged: Vec<Option<ArrayReport>> =
+        input.options.iter().map(|option| own_report(input, option)).collect();
+    let rdf: Vec<_> = judged
+        .iter()
+        .map(|report| Some(tenths(heard(report.as_ref()?, frequency)?.report.directivity.rdf_db)))
+        .collect();
+    let totals: Vec<Money> = input.options.iter().map(|option| option.bill.total).collect();
+    let costs = decibel_costs(&totals, &rdf);
+    let rows = input.options.iter().zip(folders).zip(judged.iter().zip(&costs));
+    let rows = rows.map(|((option, folder), (report, cost))| OptionRow {
         name: option.design.option.clone(),
         folder: if folder.is_empty() { String::new() } else { format!("{folder}/") },
         arrays: option.design.arrays.iter().map(|a| a.spec.name.as_str()).collect::<Vec<_>>().join(", "),
         total: at_least(option, show::money(option.bill.total, currency)),
         unpriced: option.bill.unpriced.len(),
+        hears: report.as_ref().map_or_else(|| "not computed".to_owned(), |report| hears(report, frequency)),
+        decibel_cost: cost.map_or_else(|| "–".to_owned(), |cost| show::money(cost, currency)),
     });
     WholeView {
         options: rows.collect(),
         currency: currency.to_string(),
+        frequency: frequency.to_string(),
         complete: input.options.iter().all(|option| option.bill.unpriced.is_empty()),
     }
+}
+
+/// The report of the first array that belongs to this option alone, else of its first array.
+fn own_report(input: &Input<'_>, option: &OptionInput<'_>) -> Option<ArrayReport> {
+    let own = option.design.arrays.iter().position(|array| array.spec.option.is_some()).unwrap_or_default();
+    pattern::reports(input, option).into_iter().nth(own)
 }

@@ -10,6 +10,7 @@ mod escape;
 mod estimate;
 mod index;
 mod labels;
+mod pattern;
 mod plan;
 mod proof;
 mod purchase;
@@ -108,6 +109,7 @@ fn sheet_context(
         Sheet::Stakes => context(&head, &stakes::view(input, option)),
         Sheet::Build => context(&head, &build::view(input, option)),
         Sheet::Estimate => context(&head, &estimate::view(input, option)),
+        Sheet::Pattern => pattern::context(input, option, &head),
     }
 }
 

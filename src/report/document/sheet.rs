@@ -25,11 +25,13 @@ pub enum Sheet {
     Build,
     /// What it costs.
     Estimate,
+    /// What it hears.
+    Pattern,
 }
 
 impl Sheet {
     /// Every sheet in printing order.
-    pub const ALL: [Self; 9] = [
+    pub const ALL: [Self; 10] = [
         Self::Index,
         Self::Safety,
         Self::Purchase,
@@ -39,6 +41,7 @@ impl Sheet {
         Self::Stakes,
         Self::Build,
         Self::Estimate,
+        Self::Pattern,
     ];
 
     /// Its file name without extension.
@@ -53,6 +56,7 @@ impl Sheet {
             Self::Stakes => "stakes",
             Self::Build => "build",
             Self::Estimate => "estimate",
+            Self::Pattern => "pattern",
         }
     }
 
@@ -68,6 +72,7 @@ impl Sheet {
             Self::Stakes => "Stake-out",
             Self::Build => "Build sheet",
             Self::Estimate => "Estimate of materials",
+            Self::Pattern => "What the arrays hear",
         }
     }
 
@@ -81,7 +86,8 @@ impl Sheet {
             | Self::Labels
             | Self::Stakes
             | Self::Build
-            | Self::Estimate => Paper::Portrait,
+            | Self::Estimate
+            | Self::Pattern => Paper::Portrait,
         }
     }
 
@@ -96,6 +102,7 @@ impl Sheet {
             Self::Stakes => "survey crew",
             Self::Plan | Self::Build => "every crew",
             Self::Estimate => "owner",
+            Self::Pattern => "owner, and whoever tests the array",
         }
     }
 }

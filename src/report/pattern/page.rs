@@ -80,7 +80,8 @@ pub fn page(view: &View<'_>) -> Result<String, tera::Error> {
     tera.render(NAME, &context)
 }
 
-fn contents(view: &View<'_>) -> Page {
+/// Everything that the page prints, ready for its template.
+pub(in crate::report) fn contents(view: &View<'_>) -> impl Serialize + use<> {
     let mut answers = Vec::new();
     let mut arrays = Vec::new();
     for (option, reports) in view.options {

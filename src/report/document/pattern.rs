@@ -1,0 +1,42 @@
+//! What the arrays of an option hear: the page and the tables of the `pattern` command, as a sheet of the set.
+
+use serde::Serialize;
+use tera::Context;
+
+use super::sheet::Head;
+use super::{Input, OptionInput, TemplateError};
+use crate::reception::{ArrayReport, Weighting};
+use crate::report::pattern;
+
+#[derive(Debug, Serialize)]
+struct View {
+    body: String,
+}
+
+/// The reports of one option's arrays, with the weights that the parts produce.
+pub(super) fn reports(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<ArrayReport> {
+    pattern::reports(input.project, &[option.design], Weighting::Built)
+        .into_iter()
+        .flat_map(|(_, reports)| reports)
+        .collect()
+}
+
+/// The page for the HTML template, the tables for the Markdown one.
+pub(super) fn context(
+    input: &Input<'_>,
+    option: &OptionInput<'_>,
+    head: &Head,
+) -> Result<Context, TemplateError> {
+    let options = [(option.design.option.clone(), reports(input, option))];
+    let delays = pattern::delays(input.project, &[option.design]);
+    let view = pattern::View {
+        project: input.project,
+        hash: input.hash,
+        weighting: Weighting::Built,
+        options: &options,
+        delays: &delays,
+    };
+    let mut context = super::context(head, &View { body: pattern::sheet(&view).to_markdown() })?;
+    context.insert("page", &pattern::contents(&view));
+    Ok(context)
+}
