@@ -50,13 +50,13 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
     View { blocks, crew, steps }
 }
 
-/// A block of no more rows than this is not split over two pages.
-const LONGEST_WHOLE: usize = 6;
+/// A block with a hold point and no more rows than this is not split over two pages.
+const LONGEST_WHOLE: usize = 5;
 
 fn block_view(block: Block, order: &[&'static str], scene: &step::Scene<'_>) -> BlockView {
     let number = |key: &str| order.iter().position(|known| *known == key).map(|at| at + 1);
     let readings = block.hold.as_ref().map_or(0, |hold| hold.readings.len());
-    let is_short = block.steps.len() + readings <= LONGEST_WHOLE;
+    let is_short = readings > 0 && block.steps.len() + readings <= LONGEST_WHOLE;
     let steps = block.steps.into_iter().map(|step| step_view(step, &number, scene));
     BlockView { title: block.title, steps: steps.collect(), hold: block.hold, is_short }
 }

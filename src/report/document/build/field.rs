@@ -167,7 +167,7 @@ fn boxes(scene: &Scene<'_>) -> Block {
         step(
             &mut steps,
             ("hub", "T22"),
-            &["hub-bench", "hub-post", "surge"],
+            &["hub-join", "hub-post", "surge"],
             what,
             "bond a metal box to its surge rod",
         );
@@ -284,9 +284,9 @@ fn loop_resistance(array: &ArrayDesign, termination: Termination) -> String {
     match built {
         Some((resistor, earth)) => {
             let sum = resistor.ohms() + 2.0 * earth.ohms();
-            format!("{resistor} and both earths as read, ±\u{a0}20\u{a0}%; {sum:.0} if these are as computed")
+            format!("{resistor} and both earths as read above, ± 20 %; {sum:.0} if these are as computed")
         }
-        None => "the termination resistor and both earths as read, ±\u{a0}20\u{a0}%".to_owned(),
+        None => "the termination resistor and both earths as read above, ± 20 %".to_owned(),
     }
 }
 

@@ -56,7 +56,7 @@ fn bench(scene: &Scene<'_>) -> Block {
     step(
         &mut steps,
         ("kit", "T39"),
-        &["plug-bench", "feed-bench", "hub-bench"],
+        &["plug-bench", "feed-bench", "hub-join"],
         "Pack for the field".to_owned(),
         detail,
     );
@@ -140,13 +140,17 @@ fn boxes(scene: &Scene<'_>, steps: &mut Vec<Step>) {
             .filter_map(|(role, words)| scene.hub_places(role).map(|(n, at)| format!("{n} × {words} ({at})")))
             .collect();
         let what = format!("Build and test {}: {places}", boxes_of(count, "hub"));
-        let mut detail =
-            if inside.is_empty() { String::new() } else { format!("inside: {}; ", inside.join(", ")) };
+        let detail = if inside.is_empty() { String::new() } else { format!("inside: {}", inside.join(", ")) };
+        step(steps, ("hub-bench", "T36"), &[], what, detail);
         let arrays = scene.option.design.arrays.iter().map(|array| &array.plan);
         let joined: Vec<String> = arrays.flat_map(|plan| joined(&plan.feed, &plan.layout)).collect();
-        detail.push_str("joined, + being a hybrid and the innermost brackets first: ");
-        detail.push_str(&joined.join("; "));
-        step(steps, ("hub-bench", "T36"), &[], what, detail);
+        // A line for each hub on paper, one cell in the text twin.
+        let detail = format!(
+            "the signal runs with the arrows, + is a hybrid, innermost brackets first:\n{}",
+            joined.join(";\n")
+        );
+        let what = "Join the parts in each hub box".to_owned();
+        step(steps, ("hub-join", "T36"), &["hub-bench"], what, detail);
     }
 }
 
