@@ -63,8 +63,8 @@ fn strips(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<LabelStrip> {
         for (this, far) in [(&piece.from, &piece.to), (&piece.to, &piece.from)] {
             strips.push(LabelStrip {
                 id: piece.label.clone(),
-                first: format!("this end {this}"),
-                second: format!("far end {far}"),
+                first: if this == far { format!("both ends {this}") } else { format!("this end {this}") },
+                second: if this == far { format!("leg: {}", leg(piece)) } else { format!("far end {far}") },
                 text: machine_text(piece, this, far),
                 foot: format!("wrap this round · {} · {}", piece.label, input.hash),
                 more: String::new(),
@@ -109,11 +109,17 @@ fn box_at(point: &Point) -> Option<(LabelKind, &'static str)> {
     })
 }
 
-/// "B2 W1-F>H1 68.70 A": id, this end, far end, finished metres, match group; plain ASCII.
+/// The leg that a delay line belongs to: "rear" of "rear of group 1 from the left".
+fn leg(piece: &Piece) -> &str {
+    piece.serves.split(" of ").next().unwrap_or_default()
+}
+
+/// "B2 W1-F>H1 68.70 A", for a delay at its hub "D1 H1 rear 14.106": id, this end, far end, finished metres, match group; plain ASCII.
 pub(super) fn machine_text(piece: &Piece, this: &str, far: &str) -> String {
     let finished = show::metres(piece.finished);
-    let full = format!("{} {this}>{far} {finished} {}", piece.label, piece.match_group);
-    let ends = format!("{} {this}>{far}", piece.label);
+    let way = if this == far { format!("{this} {}", leg(piece)) } else { format!("{this}>{far}") };
+    let full = format!("{} {way} {finished} {}", piece.label, piece.match_group);
+    let ends = format!("{} {way}", piece.label);
     let plain = |text: &str| -> String {
         text.trim().chars().map(|c| if c.is_ascii_graphic() || c == ' ' { c } else { '?' }).collect()
     };
