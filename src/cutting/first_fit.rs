@@ -67,10 +67,8 @@ fn items(job: &CutJob) -> (Vec<Bundle>, Vec<String>) {
     let single =
         split.into_iter().flat_map(|bundle| bundle.pieces).map(|piece| Bundle { pieces: vec![piece] });
     let mut bundles: Vec<Bundle> = whole.into_iter().chain(single).collect();
-    bundles.sort_by(|a, b| {
-        let longest_first = b.room(loss).cmp(&a.room(loss));
-        longest_first.then_with(|| a.pieces[0].label.cmp(&b.pieces[0].label))
-    });
+    // stable: pieces of one length keep the order of the takeoff, R2 before R10
+    bundles.sort_by_key(|bundle| std::cmp::Reverse(bundle.room(loss)));
     (bundles, names)
 }
 
