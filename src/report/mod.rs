@@ -7,6 +7,7 @@ pub mod estimate;
 pub mod machine;
 pub mod parts;
 pub mod pattern;
+mod running_head;
 pub mod sheet;
 pub mod why;
 

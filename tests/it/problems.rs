@@ -16,7 +16,7 @@ fn codes() -> BTreeSet<&'static str> {
 }
 
 fn fixtures() -> BTreeSet<String> {
-    let entries = std::fs::read_dir(repository("tests/problems/build")).unwrap();
+    let entries = std::fs::read_dir(repository("tests/problems/plan")).unwrap();
     entries.map(|entry| entry.unwrap().file_name().into_string().unwrap()).collect()
 }
 
@@ -38,7 +38,7 @@ fn every_problem_code_has_a_fixture() {
 fn every_problem_is_said_in_its_exact_words() {
     let renew = std::env::var("SNAPSHOTS").is_ok_and(|mode| mode == "overwrite");
     for code in fixtures() {
-        let folder = repository("tests/problems/build").join(&code);
+        let folder = repository("tests/problems/plan").join(&code);
         let said = said_about(&folder);
         assert!(said.contains(&format!("[{code}]")), "{code} is not said:\n{said}");
         let expected = folder.join("expected.txt");

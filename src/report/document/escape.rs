@@ -2,6 +2,8 @@
 
 use std::io::{Result, Write};
 
+use crate::report::running_head::css_string;
+
 use tera::{Kwargs, State};
 
 /// Escapes a value for Markdown: nothing in it starts a table cell, a heading, a list, a link, emphasis or HTML.
@@ -34,17 +36,7 @@ fn followed_by_blank(text: &str, at: usize) -> Option<usize> {
 
 /// The filter `css`: a value inside a CSS string in double quotes.
 pub(super) fn css(text: &str, _: Kwargs, _: &State) -> String {
-    let mut out = String::with_capacity(text.len());
-    for c in text.chars() {
-        match c {
-            '\\' => out.push_str("\\5c "),
-            '"' => out.push_str("\\22 "),
-            '<' => out.push_str("\\3c "),
-            c if c.is_control() => out.push(' '),
-            c => out.push(c),
-        }
-    }
-    out
+    css_string(text)
 }
 
 #[cfg(test)]

@@ -3,7 +3,7 @@
 //! Each sheet is one file here that computes a view (strings already rounded) and one pair of templates that loops over
 //! it and prints. Options never share a sheet: a named option has a folder of its own.
 
-mod build;
+mod build_sheet;
 mod cuts;
 mod engine;
 mod escape;
@@ -107,7 +107,7 @@ fn sheet_context(
         Sheet::Labels => context(&head, &labels::view(input, option)),
         Sheet::Plan => context(&head, &plan::view(input, option)),
         Sheet::Stakes => context(&head, &stakes::view(input, option)),
-        Sheet::Build => context(&head, &build::view(input, option)),
+        Sheet::Build => context(&head, &build_sheet::view(input, option)),
         Sheet::Estimate => context(&head, &estimate::view(input, option)),
         Sheet::Pattern => pattern::context(input, option, &head),
     }

@@ -2,6 +2,8 @@
 
 use serde::Serialize;
 
+use crate::report::running_head::running_head;
+
 use super::{Input, OptionInput};
 
 /// One sheet.
@@ -164,7 +166,7 @@ impl Head {
             format!("datum {}, {} (WGS 84)", latitude.normalize(), longitude.normalize())
         });
         Self {
-            running: shortened(&project.title, 60),
+            running: running_head(&project.title),
             project: project.title.clone(),
             title: "Options".to_owned(),
             name: "index".to_owned(),
@@ -176,13 +178,5 @@ impl Head {
             version: input.version.to_owned(),
             paper: Paper::Portrait,
         }
-    }
-}
-
-fn shortened(text: &str, longest: usize) -> String {
-    if text.chars().count() <= longest {
-        text.to_owned()
-    } else {
-        text.chars().take(longest - 1).chain(['…']).collect()
     }
 }

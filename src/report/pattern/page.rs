@@ -11,6 +11,7 @@ use crate::radio::CutPoint;
 use crate::reception::{ArrayReport, DirectionReport, Figures, FrequencyReport};
 use crate::report::Table;
 use crate::report::drawing::polar::{self, Curve, Plot};
+use crate::report::running_head::{css_string, running_head};
 use crate::report::sheet::Align;
 
 /// The page's name in the template engine; the ending switches its escaping on.
@@ -98,7 +99,7 @@ pub(in crate::report) fn contents(view: &View<'_>) -> impl Serialize + use<> {
     }
     Page {
         title: view.project.title.clone(),
-        title_css: css(&shortened(&view.project.title)),
+        title_css: css_string(&running_head(&view.project.title)),
         hash: view.hash.to_owned(),
         date: view.project.estimated.to_string(),
         basis: words::basis(view.weighting),
@@ -214,29 +215,4 @@ fn page_table(table: Table) -> PageTable {
         rows: table.rows.iter().map(|row| cells(row)).collect(),
         title: table.title,
     }
-}
-
-/// Text made safe inside a CSS string in double quotes.
-/// A title of more than 60 letters would run into the page number of the running head.
-fn shortened(title: &str) -> String {
-    const LONGEST: usize = 60;
-    if title.chars().count() <= LONGEST {
-        title.to_owned()
-    } else {
-        title.chars().take(LONGEST - 1).chain(['…']).collect()
-    }
-}
-
-fn css(text: &str) -> String {
-    let mut out = String::with_capacity(text.len());
-    for c in text.chars() {
-        match c {
-            '\\' => out.push_str("\\5c "),
-            '"' => out.push_str("\\22 "),
-            '<' => out.push_str("\\3c "),
-            c if c.is_control() => out.push(' '),
-            c => out.push(c),
-        }
-    }
-    out
 }
