@@ -2,7 +2,7 @@
 
 use std::fmt::Write as _;
 
-use crate::support::{program, repository};
+use crate::support::{ProjectTest, program, repository};
 
 /// Runs every `$ arraywright …` of a console block and compares what follows; `SNAPSHOTS=overwrite` writes it anew.
 #[test]
@@ -57,4 +57,13 @@ fn the_readme_shows_the_two_commands() {
             "cargo test\n"
         ]
     );
+}
+
+#[test]
+fn the_smallest_project_of_the_readme_can_be_built() {
+    let text = std::fs::read_to_string(repository("README.md")).unwrap();
+    let project = text.split("```toml\n").nth(1).unwrap().split("```").next().unwrap();
+    let test = ProjectTest::new(project);
+    assert!(test.run(&["check"]).exits(0).stdout().starts_with("this can be built"));
+    let _ = test.run(&["estimate"]).exits(0);
 }

@@ -7,7 +7,7 @@ use std::collections::BTreeMap;
 
 use serde_json::Value;
 
-use crate::support::{repository, run};
+use crate::support::{ProjectTest, repository, run};
 
 fn parts(id: &str) -> Value {
     let project = repository(&format!("tests/vectors/{id}.toml"));
@@ -111,6 +111,42 @@ fn v07_row_of_echelon_pairs_cell_by_cell() {
 #[test]
 fn v08_row_of_echelon_pairs_row_by_row() {
     check("V08");
+}
+
+/// The reversible cells of V09 and V10, made fixed: the same lengths, a barrel for each delay, no relay and no control cable.
+/// Source: the same arithmetic; a fixed delay is in line with its leg, a switched one looped on the hub.
+#[test]
+fn v09_and_v10_in_one_direction() {
+    for (id, barrels, plugs) in [("V09", 2, 12), ("V10", 4, 26)] {
+        let text = std::fs::read_to_string(repository(&format!("tests/vectors/{id}.toml"))).unwrap();
+        let fixed = ProjectTest::new(&text.replace(", two-way = true", ""));
+        let catalogue = repository("tests/vectors/catalogue");
+        let ran =
+            fixed.run(&["parts", "--catalog", catalogue.to_str().unwrap(), "--format", "json"]).exits(0);
+        let found = ran.json()["options"][0].clone();
+        let pieces = found["pieces"].as_array().unwrap();
+        let expected = expectation(id);
+        for key in ["finished_m", "cut_m"] {
+            for (role, wanted) in
+                expected[key].as_object().unwrap().iter().filter(|(role, _)| *role != "control")
+            {
+                let mut wanted: Vec<i64> = wanted.as_array().unwrap().iter().map(mm).collect();
+                wanted.sort_unstable();
+                assert_eq!(lengths(pieces, role, key), wanted, "{id}: {key} of {role}");
+            }
+        }
+        let count = |role: &str| {
+            let items = found["items"].as_array().unwrap();
+            items.iter().filter(|i| i["role"] == role).map(|i| i["quantity"].as_u64().unwrap()).sum::<u64>()
+        };
+        assert_eq!((count("barrel"), count("plug")), (barrels, plugs), "{id}");
+        for role in
+            ["hybrid-2way", "inverter", "pad", "choke", "hub-box", "mast", "ground-rod", "surge-device"]
+        {
+            assert_eq!(count(role), expected["items"][role].as_u64().unwrap(), "{id}: {role}");
+        }
+        assert_eq!((count("relay-dpdt"), count("control-arrester")), (0, 0), "{id}");
+    }
 }
 
 /// Vectors of families that this version does not build are refused with the reason, never half built.
