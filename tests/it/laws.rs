@@ -5,6 +5,7 @@ use arraywright::design::{self, Design};
 use arraywright::plan::{LineRole, Node};
 use arraywright::pricing;
 use arraywright::project::{self, Project};
+use arraywright::reception::{self, LineFigures};
 use arraywright::takeoff::{self, PieceRole, Takeoff};
 use arraywright::units::Length;
 use proptest::prelude::*;
@@ -197,6 +198,25 @@ fn equal_groups_are_equal(design: &Design) {
     }
 }
 
+/// Without loss the parts on the list produce the weights as designed: same tree, other reading. Pads of 3 dB stand for half the
+/// amplitude, and cables are cut to the millimetre.
+fn parts_make_the_designed_weights(project: &Project, design: &Design) {
+    let array = &design.arrays[0];
+    let frequency = project.frequency;
+    let lossless: Vec<LineFigures> =
+        reception::line_figures(&array.plan.feed, &array.lengths, &array.cables, frequency)
+            .into_iter()
+            .map(|line| LineFigures { loss_db: None, ..line })
+            .collect();
+    let built = reception::built(&array.plan.feed, &lossless, &array.plan.feed.switch.states[0], frequency);
+    let designed = reception::designed(&array.plan, frequency);
+    for (own, wanted) in built.iter().zip(&designed) {
+        let relative = (own / built[0]) / (wanted / designed[0]);
+        assert!((relative.norm() - 1.0).abs() < 0.003, "amplitude {relative}");
+        assert!(relative.arg().to_degrees().abs() < 0.05, "phase {relative}");
+    }
+}
+
 proptest! {
     #![proptest_config(ProptestConfig { cases: 96, failure_persistence: None, ..ProptestConfig::default() })]
 
@@ -207,6 +227,7 @@ proptest! {
         bill_is_the_tree(&design, &takeoff);
         plugs_have_sockets(&design, &takeoff);
         equal_groups_are_equal(&design);
+        parts_make_the_designed_weights(&project, &design);
         let (bill, problems) = pricing::price(&project, &catalogue, &takeoff);
         prop_assert!(!problems.has_errors());
         for line in &bill.lines {
