@@ -218,7 +218,7 @@ fn parts_make_the_designed_weights(project: &Project, design: &Design) {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig { cases: 96, failure_persistence: None, ..ProptestConfig::default() })]
+    #![proptest_config(ProptestConfig { cases: 96, failure_persistence: None, rng_seed: proptest::test_runner::RngSeed::Fixed(1), ..ProptestConfig::default() })]
 
     #[test]
     fn every_project_can_be_taken_off_and_priced(c in compositions()) {
