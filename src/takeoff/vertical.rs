@@ -23,9 +23,8 @@ pub(super) fn take_off(tally: &mut Tally<'_>, array: &ArrayDesign) {
 
 fn mast(tally: &mut Tally<'_>, point: &Point, foot: MastFoot, z0: &str) {
     let place = &point.name;
-    let height = foot.height.decimal_metres().normalize().to_string();
-    let why = format!("one vertical, {} high", foot.height);
-    tally.add("mast", &Want::any().with("height", height), place, 1, &why);
+    let why = format!("one vertical, set to {} (the least mast that reaches it)", foot.height);
+    tally.add("mast", &Want::any().at_least("height", foot.height.decimal_metres()), place, 1, &why);
     tally.add("base-mount", &Want::any(), place, 1, "insulated base of a vertical");
     let boxed = Want::any().with("element", "vertical").with("z_ohm", z0);
     tally.add("feed-box", &boxed, place, 1, "box at the base of a vertical");
