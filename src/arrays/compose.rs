@@ -105,10 +105,6 @@ impl<'a> Builder<'a> {
         self.layout.add_point("RX".to_owned(), PointKind::Receiver, at, vec![Fixture::StationEntry])
     }
 
-    fn element_place(&self, leg: usize) -> Position {
-        self.layout.elements[leg].at
-    }
-
     /// A hub in the field, or at the receiver when the outermost lines come home.
     fn add_hub(&mut self, at: Position, outermost: Outermost, receiver: PointId) -> HubId {
         let point = if self.comes_home(outermost) {
@@ -236,7 +232,6 @@ impl<'a> Builder<'a> {
                 let line = self.add_line(role, Termini { from, to }, group, &serves);
                 self.legs[*leg].branch = Some(line);
                 self.hubs[hub.0].inputs += 1;
-                debug_assert!(self.element_place(*leg) == self.layout.point(from).at);
                 Input { node: Node::Role(RoleId(*leg)), leg_line: Some(line), serves }
             })
             .collect()

@@ -85,6 +85,8 @@ pub(super) struct Checked {
 /// What a project is read for.
 #[derive(Clone, Copy, PartialEq, Eq)]
 enum Purpose {
+    /// To be judged: what could be better is worked out as well.
+    Check,
     /// To be built.
     Build,
     /// To be heard only: combiners that nobody builds are no obstacle.
@@ -105,7 +107,7 @@ pub(super) fn work_to_hear(arguments: &ProjectArgs) -> Result<Work, Failure> {
 
 /// Reads a project and everything that can be checked of it.
 pub(super) fn check(arguments: &ProjectArgs) -> Result<Checked, Failure> {
-    let (mut checked, work) = read_and_work(arguments, Purpose::Build)?;
+    let (mut checked, work) = read_and_work(arguments, Purpose::Check)?;
     if let Some(work) = work {
         checked.problems = work.problems;
         checked.project = Some(work.project);
@@ -126,20 +128,23 @@ fn read_and_work(arguments: &ProjectArgs, purpose: Purpose) -> Result<(Checked, 
     if checked.problems.has_errors() {
         return Ok((checked, None));
     }
-    let wanted = wanted_options(&project, arguments.option.as_deref())?;
-    let project = arguments.option.as_deref().map_or_else(|| project.clone(), |option| project.only(option));
+    let mut project = match arguments.option.as_deref() {
+        None => project,
+        Some(option) => only(&project, option)?,
+    };
     checked.project = Some(project.clone());
     let catalogue = supply.catalogue;
-    let mut project = project;
     project.assumptions.push(entry_bond());
     let settled = design::settle(&project, &catalogue);
     problems.extend(settled.problems);
-    if purpose == Purpose::Build {
+    if purpose != Purpose::Hear {
         problems.extend(design::check_hybrids(&settled.designs));
     }
+    if purpose == Purpose::Check {
+        checked.remarks = remarks(&project, &settled.designs);
+    }
     let mut results = Vec::new();
-    checked.remarks = remarks(&project, &settled.designs);
-    for design in settled.designs.into_iter().filter(|design| wanted.contains(&design.option)) {
+    for design in settled.designs {
         let takeoff = takeoff::take_off(&project, &catalogue, &design);
         let (bill, noticed) = pricing::price(&project, &catalogue, &takeoff);
         problems.extend(noticed);
@@ -185,18 +190,15 @@ fn remarks(project: &Project, designs: &[design::Design]) -> Vec<String> {
     lines
 }
 
-fn wanted_options(project: &Project, wanted: Option<&str>) -> Result<Vec<String>, Failure> {
+/// The project with one option only.
+fn only(project: &Project, wanted: &str) -> Result<Project, Failure> {
     let options = project.options();
-    match wanted {
-        None => Ok(options),
-        Some(name) if options.iter().any(|option| option == name) => Ok(vec![name.to_owned()]),
-        Some(name) => {
-            let known: Vec<&str> =
-                options.iter().map(String::as_str).filter(|option| !option.is_empty()).collect();
-            let known = if known.is_empty() { "none".to_owned() } else { known.join(", ") };
-            Err(Failure::Usage(format!("this project has no option `{name}`; it has: {known}")))
-        }
+    if options.iter().any(|option| option == wanted) {
+        return Ok(project.only(wanted));
     }
+    let known: Vec<&str> = options.iter().map(String::as_str).filter(|option| !option.is_empty()).collect();
+    let known = if known.is_empty() { "none".to_owned() } else { known.join(", ") };
+    Err(Failure::Usage(format!("this project has no option `{wanted}`; it has: {known}")))
 }
 
 /// The project file and the stock beside it.

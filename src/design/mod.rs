@@ -71,6 +71,14 @@ pub struct ArrayDesign {
     pub noise: NoiseSite,
 }
 
+impl Design {
+    /// The array that this option is judged by: its first own one, for an array of every option tells none apart; else its
+    /// first.
+    pub fn judged(&self) -> usize {
+        self.arrays.iter().position(|array| array.spec.option.is_some()).unwrap_or_default()
+    }
+}
+
 impl ArrayDesign {
     /// This array as a subject of a pattern report.
     pub fn subject(&self, weighting: Weighting) -> Subject<'_> {

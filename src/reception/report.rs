@@ -4,7 +4,7 @@ use num_complex::Complex64;
 
 use super::element::{self, Ends};
 use super::noise::{self, Noise, NoiseSite};
-use super::weight::{built, designed, line_figures};
+use super::weight::{LineFigures, built, designed, line_figures};
 use crate::plan::{ArrayPlan, Cables, ElementKind, Layout, LineLength, State};
 use crate::radio::{self, DelayCurve, ErrorSize, PatternReport, RadioElement, RadioError, Response, Soil};
 use crate::units::{Angle, Bearing, Frequency};
@@ -44,6 +44,14 @@ pub struct ArrayReport {
     pub array: String,
     /// One a direction.
     pub directions: Vec<DirectionReport>,
+}
+
+impl ArrayReport {
+    /// The figures of the first direction at one frequency, where they can be computed.
+    pub fn first_figures(&self, frequency: Frequency) -> Option<&Figures> {
+        let direction = self.directions.first()?;
+        direction.frequencies.iter().find(|report| report.frequency == frequency)?.figures.as_ref().ok()
+    }
 }
 
 /// The report of one direction.
@@ -115,22 +123,34 @@ pub fn seen_from(subject: &Subject<'_>, state: &State) -> Vec<RadioElement> {
     }
 }
 
+/// Loss and electrical length of the subject's lines at one frequency.
+fn lines_of(subject: &Subject<'_>, frequency: Frequency) -> Vec<LineFigures> {
+    line_figures(&subject.plan.feed, subject.lengths, subject.cables, frequency)
+}
+
 /// The weights of the elements in a state, as designed or as built.
 pub fn weights(subject: &Subject<'_>, state: &State, frequency: Frequency) -> Vec<Complex64> {
+    weights_through(subject, state, frequency, &lines_of(subject, frequency))
+}
+
+fn weights_through(
+    subject: &Subject<'_>,
+    state: &State,
+    frequency: Frequency,
+    lines: &[LineFigures],
+) -> Vec<Complex64> {
     match subject.weighting {
         Weighting::Ideal => designed(subject.plan, frequency),
-        Weighting::Built => {
-            let lines = line_figures(&subject.plan.feed, subject.lengths, subject.cables, frequency);
-            built(&subject.plan.feed, &lines, state, frequency)
-        }
+        Weighting::Built => built(&subject.plan.feed, lines, state, frequency),
     }
 }
 
 fn at_frequency(subject: &Subject<'_>, state: &State, frequency: Frequency) -> FrequencyReport {
     let elements = seen_from(subject, state);
-    let weights = weights(subject, state, frequency);
+    let lines = lines_of(subject, frequency);
+    let weights = weights_through(subject, state, frequency, &lines);
     let names = subject.plan.layout.elements.iter().map(|element| element.name.clone()).collect();
-    let figures = figures(subject, elements, &weights, frequency);
+    let figures = figures(subject, elements, &weights, &lines, frequency);
     FrequencyReport { frequency, names, weights, figures }
 }
 
@@ -138,6 +158,7 @@ fn figures(
     subject: &Subject<'_>,
     elements: Vec<RadioElement>,
     weights: &[Complex64],
+    lines: &[LineFigures],
     frequency: Frequency,
 ) -> Result<Figures, RadioError> {
     let response = Response::new(&elements, subject.soil, frequency)?;
@@ -145,26 +166,21 @@ fn figures(
     let array = radio::Array { elements, weights: weights.to_vec() };
     let report = radio::report_of(&response, &array, &ErrorSize::default());
     let peak = report.directivity.peak_elevation_deg;
-    let lines = line_figures(&subject.plan.feed, subject.lengths, subject.cables, frequency);
     let notes = match subject.weighting {
         Weighting::Ideal => Vec::new(),
-        Weighting::Built => lossless_notes(subject, &lines, frequency),
+        Weighting::Built => lossless_notes(subject, lines, frequency),
     };
     Ok(Figures {
         azimuth: radio::azimuth_cut(&response, weights, peak, 2.0),
         elevation: radio::elevation_cut(&response, weights, 1.0),
-        noise: noise::budget(subject, &response, weights, &lines, frequency),
+        noise: noise::budget(subject, &response, weights, lines, frequency),
         report,
         notes,
     })
 }
 
 /// A cable without a loss figure at this frequency is taken as lossless, and said to be.
-fn lossless_notes(
-    subject: &Subject<'_>,
-    lines: &[super::weight::LineFigures],
-    frequency: Frequency,
-) -> Vec<String> {
+fn lossless_notes(subject: &Subject<'_>, lines: &[LineFigures], frequency: Frequency) -> Vec<String> {
     let silent = subject.plan.feed.lines.iter().zip(lines).filter(|(_, figures)| figures.loss_db.is_none());
     let mut parts: Vec<&str> = silent.map(|(line, _)| subject.cables.of(line.role).part.id()).collect();
     parts.sort_unstable();
@@ -198,9 +214,9 @@ pub fn report_noise(subject: &Subject<'_>, frequencies: &[Frequency]) -> Vec<(Fr
         .iter()
         .filter_map(|frequency| {
             let response = Response::new(&elements, subject.soil, *frequency).ok()?;
-            let weights = weights(subject, state, *frequency);
+            let lines = lines_of(subject, *frequency);
+            let weights = weights_through(subject, state, *frequency, &lines);
             response.check_weights(&weights).ok()?;
-            let lines = line_figures(&subject.plan.feed, subject.lengths, subject.cables, *frequency);
             Some((*frequency, noise::budget(subject, &response, &weights, &lines, *frequency)?))
         })
         .collect()

@@ -96,19 +96,13 @@ pub fn rows(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayRepor
     rows
 }
 
-/// The array that an option is judged by: its first own one, for an array of every option tells none apart; else its first.
-fn judged(result: &OptionResult) -> usize {
-    result.design.arrays.iter().position(|array| array.spec.option.is_some()).unwrap_or_default()
-}
-
 /// The figures of the array that an option is judged by, in its first direction at one frequency.
 fn figures<'a>(
     result: &OptionResult,
     reports: &'a [ArrayReport],
     frequency: Frequency,
 ) -> Option<&'a Figures> {
-    let direction = reports.get(judged(result))?.directions.first()?;
-    direction.frequencies.iter().find(|report| report.frequency == frequency)?.figures.as_ref().ok()
+    reports.get(result.design.judged())?.first_figures(frequency)
 }
 
 /// Directivity, rear, beamwidth and signal of the array that each option is judged by, and what a dB costs above the cheapest.
@@ -271,7 +265,7 @@ pub fn sheet(project: &Project, results: &[OptionResult], heard: &[Vec<ArrayRepo
     if results.iter().any(|result| result.design.arrays.len() > 1) {
         let by: Vec<String> = results
             .iter()
-            .filter_map(|result| Some((result.name(), result.design.arrays.get(judged(result))?)))
+            .filter_map(|result| Some((result.name(), result.design.arrays.get(result.design.judged())?)))
             .map(|(option, array)| format!("{option} by {}", array.plan.name))
             .collect();
         sheet.notes.push(format!(

@@ -5,9 +5,9 @@ use std::collections::BTreeSet;
 use serde::Serialize;
 
 use super::sheet::{Paper, Sheet};
-use super::{Input, OptionInput, pattern, purchase, show};
+use super::{Input, OptionInput, purchase, show};
 use crate::radio::FRONT_TO_BACK_CEILING_DB;
-use crate::reception::{ArrayReport, Figures};
+use crate::reception::ArrayReport;
 use crate::report::compare::{decibel_costs, tenths};
 use crate::units::{Frequency, Money};
 
@@ -67,7 +67,7 @@ struct OptionRow {
 }
 
 /// The view of one option's index.
-pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
+pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>, reports: &[ArrayReport]) -> View {
     let sheets = Sheet::ALL.into_iter().filter(|sheet| *sheet != Sheet::Index).enumerate();
     let pieces = option.takeoff.pieces.len();
     let points = option.design.arrays.iter().flat_map(|array| &array.plan.layout.points);
@@ -76,7 +76,7 @@ pub(super) fn view(input: &Input<'_>, option: &OptionInput<'_>) -> View {
     View {
         unpriced: purchase::missing(input, option),
         unplaced: super::cuts::unplaced(option),
-        arrays: arrays(input, option),
+        arrays: arrays(input, option, reports),
         sheets: sheets.map(|(n, sheet)| sheet_row(n + 1, sheet)).collect(),
         frequencies: frequencies(input),
         totals: vec![
@@ -110,9 +110,8 @@ pub(super) fn frequencies(input: &Input<'_>) -> String {
     if also.is_empty() { design } else { format!("{design}, also {}", also.join(", ")) }
 }
 
-fn arrays(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<ArrayRow> {
-    let reports = pattern::reports(input, option);
-    let rows = option.design.arrays.iter().zip(&reports).map(|(array, report)| {
+fn arrays(input: &Input<'_>, option: &OptionInput<'_>, reports: &[ArrayReport]) -> Vec<ArrayRow> {
+    let rows = option.design.arrays.iter().zip(reports).map(|(array, report)| {
         let layout = &array.plan.layout;
         let names: Vec<&str> = layout.elements.iter().map(|element| element.name.as_str()).collect();
         let bearings: Vec<String> =
@@ -131,7 +130,7 @@ fn arrays(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<ArrayRow> {
 /// "RDF 12.0 dB at 29° elevation, worst rear −14.4 dB, front to back 22 dB, beam 68°": the first direction at the design
 /// frequency.
 fn hears(report: &ArrayReport, frequency: Frequency) -> String {
-    let Some(figures) = heard(report, frequency) else { return "not computed".to_owned() };
+    let Some(figures) = report.first_figures(frequency) else { return "not computed".to_owned() };
     let d = &figures.report.directivity;
     let back = if d.front_to_back_db > FRONT_TO_BACK_CEILING_DB {
         format!("> {FRONT_TO_BACK_CEILING_DB}")
@@ -145,19 +144,18 @@ fn hears(report: &ArrayReport, frequency: Frequency) -> String {
     )
 }
 
-fn heard(report: &ArrayReport, frequency: Frequency) -> Option<&Figures> {
-    let direction = report.directions.first()?;
-    direction.frequencies.iter().find(|at| at.frequency == frequency)?.figures.as_ref().ok()
-}
-
 /// The view of the index over all options, each judged by its own first array.
-pub(super) fn whole(input: &Input<'_>, folders: &[String]) -> WholeView {
+pub(super) fn whole(input: &Input<'_>, folders: &[String], heard: &[Vec<ArrayReport>]) -> WholeView {
     let (currency, frequency) = (&input.project.currency, input.project.frequency);
-    let judged: Vec<Option<ArrayReport>> =
-        input.options.iter().map(|option| own_report(input, option)).collect();
+    let judged: Vec<Option<&ArrayReport>> = input
+        .options
+        .iter()
+        .zip(heard)
+        .map(|(option, reports)| reports.get(option.design.judged()))
+        .collect();
     let rdf: Vec<_> = judged
         .iter()
-        .map(|report| Some(tenths(heard(report.as_ref()?, frequency)?.report.directivity.rdf_db)))
+        .map(|report| Some(tenths((*report)?.first_figures(frequency)?.report.directivity.rdf_db)))
         .collect();
     let totals: Vec<Money> = input.options.iter().map(|option| option.bill.total).collect();
     let costs = decibel_costs(&totals, &rdf);
@@ -168,7 +166,7 @@ pub(super) fn whole(input: &Input<'_>, folders: &[String]) -> WholeView {
         arrays: option.design.arrays.iter().map(|a| a.spec.name.as_str()).collect::<Vec<_>>().join(", "),
         total: at_least(option, show::money(option.bill.total, currency)),
         unpriced: option.bill.unpriced.len(),
-        hears: report.as_ref().map_or_else(|| "not computed".to_owned(), |report| hears(report, frequency)),
+        hears: report.map_or_else(|| "not computed".to_owned(), |report| hears(report, frequency)),
         decibel_cost: cost.map_or_else(|| "–".to_owned(), |cost| show::money(cost, currency)),
     });
     WholeView {
@@ -177,10 +175,4 @@ pub(super) fn whole(input: &Input<'_>, folders: &[String]) -> WholeView {
         frequency: frequency.to_string(),
         complete: input.options.iter().all(|option| option.bill.unpriced.is_empty()),
     }
-}
-
-/// The report of the first array that belongs to this option alone, else of its first array.
-fn own_report(input: &Input<'_>, option: &OptionInput<'_>) -> Option<ArrayReport> {
-    let own = option.design.arrays.iter().position(|array| array.spec.option.is_some()).unwrap_or_default();
-    pattern::reports(input, option).into_iter().nth(own)
 }

@@ -30,6 +30,7 @@ use crate::catalogue::Catalogue;
 use crate::design::Design;
 use crate::pricing::Bill;
 use crate::project::Project;
+use crate::reception::{ArrayReport, Weighting};
 use crate::takeoff::Takeoff;
 use engine::Engine;
 use sheet::Head;
@@ -73,15 +74,17 @@ pub fn render(
     let engine = Engine::new(overrides)?;
     let mut files = Vec::new();
     let folders = folders(input.options);
+    let heard: Vec<Vec<ArrayReport>> =
+        input.options.iter().map(|option| hear(input.project, option.design)).collect();
     if folders.iter().any(|folder| !folder.is_empty()) {
-        let context = context(&Head::whole(input), &index::whole(input, &folders))?;
+        let context = context(&Head::whole(input), &index::whole(input, &folders, &heard))?;
         for (extension, template) in [("html", "options.html"), ("md", "options.md")] {
             files.push((format!("index.{extension}"), engine.render(template, &context)?));
         }
     }
-    for (option, folder) in input.options.iter().zip(&folders) {
+    for ((option, folder), reports) in input.options.iter().zip(&folders).zip(&heard) {
         for sheet in Sheet::ALL {
-            let context = sheet_context(input, option, sheet)?;
+            let context = sheet_context(input, option, reports, sheet)?;
             for extension in ["html", "md"] {
                 let name = format!("{}.{extension}", sheet.name());
                 let text = engine.render(&name, &context)?;
@@ -93,14 +96,21 @@ pub fn render(
     Ok(files)
 }
 
+/// What an option's arrays hear, with the weights that the parts produce.
+fn hear(project: &Project, design: &Design) -> Vec<ArrayReport> {
+    let options = super::pattern::reports(project, &[design], Weighting::Built);
+    options.into_iter().flat_map(|(_, reports)| reports).collect()
+}
+
 fn sheet_context(
     input: &Input<'_>,
     option: &OptionInput<'_>,
+    reports: &[ArrayReport],
     sheet: Sheet,
 ) -> Result<Context, TemplateError> {
     let head = Head::new(input, option, sheet);
     match sheet {
-        Sheet::Index => context(&head, &index::view(input, option)),
+        Sheet::Index => context(&head, &index::view(input, option, reports)),
         Sheet::Safety => context(&head, &safety::view(input, option)),
         Sheet::Purchase => context(&head, &purchase::view(input, option)),
         Sheet::Cuts => context(&head, &cuts::view(input, option)),
@@ -109,7 +119,7 @@ fn sheet_context(
         Sheet::Stakes => context(&head, &stakes::view(input, option)),
         Sheet::Build => context(&head, &build_sheet::view(input, option)),
         Sheet::Estimate => context(&head, &estimate::view(input, option)),
-        Sheet::Pattern => pattern::context(input, option, &head),
+        Sheet::Pattern => pattern::context(input, option, reports, &head),
     }
 }
 

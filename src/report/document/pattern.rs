@@ -13,21 +13,14 @@ struct View {
     body: String,
 }
 
-/// The reports of one option's arrays, with the weights that the parts produce.
-pub(super) fn reports(input: &Input<'_>, option: &OptionInput<'_>) -> Vec<ArrayReport> {
-    pattern::reports(input.project, &[option.design], Weighting::Built)
-        .into_iter()
-        .flat_map(|(_, reports)| reports)
-        .collect()
-}
-
 /// The page for the HTML template, the tables for the Markdown one.
 pub(super) fn context(
     input: &Input<'_>,
     option: &OptionInput<'_>,
+    reports: &[ArrayReport],
     head: &Head,
 ) -> Result<Context, TemplateError> {
-    let options = [(option.design.option.clone(), reports(input, option))];
+    let options = [(option.design.option.clone(), reports.to_vec())];
     let delays = pattern::delays(input.project, &[option.design]);
     let view = pattern::View {
         project: input.project,
