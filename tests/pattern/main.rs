@@ -5,5 +5,7 @@
 mod built;
 mod cases;
 mod page;
+#[path = "../reference/pattern_cases.rs"]
+mod pattern_cases;
 mod shape;
 mod support;

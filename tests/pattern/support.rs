@@ -132,22 +132,3 @@ pub(crate) fn figures<'a>(json: &'a Value, array: &str) -> &'a Value {
     let found = arrays.into_iter().find(|found| found["array"] == array).expect("the array");
     &found["directions"][0]["frequencies"][0]
 }
-
-/// Collects differences that are too large, and says them all at once.
-#[derive(Default)]
-pub(crate) struct Differences(Vec<String>);
-
-impl Differences {
-    /// Notes a value that lies more than `tolerance` from what is wanted.
-    pub(crate) fn check(&mut self, name: &str, value: f64, wanted: f64, tolerance: f64) {
-        let apart = (value - wanted).abs();
-        if apart.is_nan() || apart > tolerance {
-            self.0.push(format!("{name}: {value:.5}, wanted {wanted:.5} ± {tolerance}"));
-        }
-    }
-
-    /// Fails when anything was noted.
-    pub(crate) fn none(self) {
-        assert!(self.0.is_empty(), "{} differences:\n{}", self.0.len(), self.0.join("\n"));
-    }
-}

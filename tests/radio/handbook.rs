@@ -3,7 +3,8 @@
 use arraywright::radio::{RadioElement, Response, Soil, delay_factor, directivity};
 use num_complex::Complex64;
 
-use crate::support::{Differences, crossfire, mhz, vertical, wire};
+use crate::pattern_cases::Differences;
+use crate::support::{crossfire, mhz, vertical, wire};
 
 const STEP_M: f64 = 18.3;
 

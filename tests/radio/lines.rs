@@ -6,7 +6,8 @@
 use arraywright::radio::{Soil, line_terms, pair_constants};
 use num_complex::Complex64;
 
-use crate::support::{Differences, mhz};
+use crate::pattern_cases::Differences;
+use crate::support::mhz;
 
 /// Frequency, soil, height, velocity factor, dB per 100 m, Z₀ of a wire of 0.8 mm radius.
 const TABLE: [(f64, Soil, f64, f64, f64, f64, f64); 16] = [

@@ -6,6 +6,8 @@ mod cases;
 mod handbook;
 mod laws;
 mod lines;
+#[path = "../reference/pattern_cases.rs"]
+mod pattern_cases;
 mod reference;
 mod signs;
 mod spread;

@@ -14,7 +14,8 @@ use num_complex::Complex64;
 use rust_decimal::Decimal;
 use serde::Deserialize;
 
-use crate::support::{Differences, equal, vertical};
+use crate::pattern_cases::Differences;
+use crate::support::{equal, vertical};
 
 #[derive(Deserialize)]
 struct File {

@@ -11,7 +11,8 @@ use arraywright::units::VelocityFactor;
 use num_complex::Complex64;
 use rust_decimal::Decimal;
 
-use crate::support::{Differences, crossfire, mhz, vertical, wire};
+use crate::pattern_cases::Differences;
+use crate::support::{crossfire, mhz, vertical, wire};
 
 const STEP_M: f64 = 18.3;
 

@@ -46,22 +46,3 @@ pub(crate) fn crossfire(frequency: Frequency, delay_m: f64) -> Vec<Complex64> {
 pub(crate) fn equal(count: usize) -> Vec<Complex64> {
     vec![Complex64::ONE; count]
 }
-
-/// Collects differences that are too large, and says them all at once.
-#[derive(Default)]
-pub(crate) struct Differences(Vec<String>);
-
-impl Differences {
-    /// Notes a value that lies more than `tolerance` from what is wanted.
-    pub(crate) fn check(&mut self, name: &str, value: f64, wanted: f64, tolerance: f64) {
-        let apart = (value - wanted).abs();
-        if apart.is_nan() || apart > tolerance {
-            self.0.push(format!("{name}: {value:.5}, wanted {wanted:.5} ± {tolerance}"));
-        }
-    }
-
-    /// Fails when anything was noted.
-    pub(crate) fn none(self) {
-        assert!(self.0.is_empty(), "{} differences:\n{}", self.0.len(), self.0.join("\n"));
-    }
-}

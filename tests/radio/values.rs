@@ -10,7 +10,8 @@ use arraywright::radio::{
 use arraywright::units::{Length, Resistance};
 use num_complex::Complex64;
 
-use crate::support::{Differences, crossfire, equal, mhz, vertical, wire, wire_ending};
+use crate::pattern_cases::Differences;
+use crate::support::{crossfire, equal, mhz, vertical, wire, wire_ending};
 
 fn near(value: Complex64, re: f64, im: f64, tolerance: f64) {
     assert!(
